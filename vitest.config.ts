@@ -1,0 +1,35 @@
+import { fileURLToPath } from 'node:url';
+import { defineConfig } from 'vitest/config';
+
+export default defineConfig({
+  resolve: { alias: { '~': fileURLToPath(new URL('./src', import.meta.url)) } },
+  test: {
+    testTimeout: 60_000,
+    hookTimeout: 60_000,
+    pool: 'forks',
+    projects: [
+      {
+        extends: true,
+        test: { name: 'core', include: ['tests/{unit,property,reference,architecture}/**/*.test.ts'] },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'server',
+          include: ['tests/{db,http,fault}/**/*.test.ts'],
+          globalSetup: ['tests/helpers/global-setup.ts'],
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'browser',
+          include: ['tests/e2e/**/*.test.ts'],
+          globalSetup: ['tests/helpers/global-setup.ts'],
+          fileParallelism: false,
+          testTimeout: 180_000,
+        },
+      },
+    ],
+  },
+});
