@@ -1,0 +1,27 @@
+import { authRoutes } from './auth';
+import { classRoutes, handoutRoutes, peopleRoutes } from './classes';
+import { furnaceRoutes, kilnRoutes, tariffRoutes, thermocoupleRoutes } from './equipment';
+import { estimateRoutes, profileRoutes } from './profiles';
+import { findingRoutes, reviewRoutes, runRoutes } from './runs';
+import type { Route } from './route';
+
+/** Every call of the HTTP contract, by noun. The OpenAPI document and the typed client are made from this. */
+export const routes = {
+  auth: authRoutes,
+  people: peopleRoutes,
+  kilns: kilnRoutes,
+  furnaces: furnaceRoutes,
+  thermocouples: thermocoupleRoutes,
+  tariffs: tariffRoutes,
+  profiles: profileRoutes,
+  estimates: estimateRoutes,
+  classes: classRoutes,
+  handouts: handoutRoutes,
+  runs: runRoutes,
+  findings: findingRoutes,
+  review: reviewRoutes,
+} as const;
+
+export const allRoutes: readonly Route[] = Object.values(routes).flatMap(
+  (group) => Object.values(group) as Route[],
+);

@@ -1,0 +1,52 @@
+import { HoldfastError } from '../errors';
+
+export const MAX_JSON_BYTES = 1024 * 1024;
+
+/** Reads a JSON body, counting bytes as they stream, so that a large body is refused before it is held in memory. */
+export async function readJson(request: Request, maxBytes = MAX_JSON_BYTES): Promise<unknown> {
+  const type = request.headers.get('content-type') ?? '';
+  if (!/^application\/json(\s*;|$)/i.test(type)) {
+    throw new HoldfastError(
+      'wrong-type',
+      `Expected application/json, found ${type ? `'${type.slice(0, 80)}'` : 'no content type'}.`,
+    );
+  }
+  const text = await readText(request, maxBytes);
+  if (text.trim() === '') throw new HoldfastError('malformed', 'The body is empty; expected a JSON object.');
+  try {
+    return JSON.parse(text, (key, value: unknown) => {
+      if (key === '__proto__') throw new SyntaxError("a member named '__proto__'");
+      return value;
+    });
+  } catch (error) {
+    throw new HoldfastError(
+      'malformed',
+      `The body is not JSON: ${error instanceof Error ? error.message.slice(0, 120) : 'unreadable'}.`,
+    );
+  }
+}
+
+async function readText(request: Request, maxBytes: number): Promise<string> {
+  const tooLarge = () => new HoldfastError('too-large', `A JSON body may hold ${maxBytes} bytes here.`);
+  if (Number(request.headers.get('content-length') ?? 0) > maxBytes) throw tooLarge();
+  if (!request.body) return '';
+  const decoder = new TextDecoder('utf-8', { fatal: true });
+  const parts: string[] = [];
+  let bytes = 0;
+  const reader = request.body.getReader();
+  try {
+    for (;;) {
+      const { done, value } = await reader.read();
+      if (done) break;
+      bytes += value.byteLength;
+      if (bytes > maxBytes) throw tooLarge();
+      parts.push(decoder.decode(value, { stream: true }));
+    }
+    parts.push(decoder.decode());
+  } catch (error) {
+    await reader.cancel().catch(() => undefined);
+    if (error instanceof HoldfastError) throw error;
+    throw new HoldfastError('malformed', 'The body is not UTF-8 text, or it broke off.');
+  }
+  return parts.join('');
+}
