@@ -61,12 +61,12 @@ export type ParsedMapping =
 
 /** Reads a mapping as sent beside a file: JSON text or an object; nothing at all is an empty mapping. */
 export function parseMapping(input: unknown): ParsedMapping {
-  let value = input ?? {};
+  let value: unknown = input ?? {};
   if (typeof value === 'string') {
     if (value.trim() === '') value = {};
     else {
       try {
-        value = JSON.parse(value) as unknown;
+        value = JSON.parse(value);
       } catch {
         return { ok: false, issues: [{ path: 'mapping', message: 'not JSON' }] };
       }
