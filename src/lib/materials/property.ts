@@ -54,7 +54,7 @@ export function withOverride(
   overrides: Readonly<Record<string, number>>,
   name: string,
 ): Property | undefined {
-  const property = properties[name];
+  const property = Object.hasOwn(properties, name) ? properties[name] : undefined;
   if (!Object.hasOwn(overrides, name)) return property;
   const value = overrides[name];
   if (value === undefined) return property;

@@ -1,0 +1,28 @@
+import { constant } from './property';
+import type { Property } from './schema';
+
+/** What a kiln is taken to do where its plate says nothing. */
+export const kilnDefaults = {
+  /** Cold air drawn through the chamber with the vent open, in volumes of the chamber. */
+  ventVolumesPerH: constant(60, '1/h', 'One chamber volume of cold air a minute', 'common-practice'),
+  /** Cold air leaking through the closed kiln. */
+  leakVolumesPerH: constant(
+    3,
+    '1/h',
+    'Seams and spy holes of a closed kiln, 5-10 % of its heat',
+    'common-practice',
+  ),
+  openFromC: constant(
+    120,
+    '°C',
+    'Ceramic suppliers: open at 52-121 °C, crack the lid below 200 °C',
+    'published',
+  ),
+  unloadC: constant(45, '°C', 'Bare hands', 'common-practice'),
+  casingLimitC: constant(
+    71,
+    '°C',
+    'New York City Fire Code 2022, chapter 30: combustible ceiling or floor',
+    'published',
+  ),
+} satisfies Record<string, Property>;
