@@ -16,7 +16,7 @@ function connect(): Sequelize {
   const sequelize = new Sequelize(config().databaseUrl, {
     dialect: 'postgres',
     logging: false,
-    pool: { max: 10, min: 0, acquire: 15_000, idle: 10_000 },
+    pool: { max: config().databaseConnections, min: 0, acquire: 15_000, idle: 10_000 },
     define: { underscored: true, timestamps: false },
   });
   initModels(sequelize);
