@@ -1,5 +1,13 @@
 -- Profiles, their numbered versions, the state each version is in, and what happened to it.
 
+-- How a studio works: whether an author may approve their own version (a studio of one), and when people are there,
+-- in local minutes of the day, for the moments of a firing that need somebody.
+alter table studios
+  add column authors_approve boolean not null default false,
+  add column attended_from_minute integer not null default 480 check (attended_from_minute between 0 and 1439),
+  add column attended_until_minute integer not null default 1200 check (attended_until_minute between 1 and 1440),
+  add check (attended_until_minute > attended_from_minute);
+
 create table profiles (
   studio_id uuid not null references studios (id),
   id uuid not null,

@@ -3,7 +3,7 @@ import type { ParamsOf, Route } from '~/lib/contracts/route';
 import type { z } from '~/lib/zod';
 import type { Actor } from '../auth/actor';
 import { HoldfastError } from '../errors';
-import { readJson } from './json-body';
+import { isStorable, readJson } from './json-body';
 import { issuesOf, problemResponse } from './problem';
 
 type Parsed<S> = S extends z.ZodType ? z.output<S> : undefined;
@@ -45,7 +45,7 @@ export function publicEndpoint<R extends Route>(route: R, act: Act<PublicCall<R>
     const call = {
       actor: context.locals.actor ?? null,
       params: context.params as ParamsOf<R['path']>,
-      query: parse(route.query, Object.fromEntries(context.url.searchParams), 'query') as Parsed<R['query']>,
+      query: parse(route.query, queryOf(context.url), 'query') as Parsed<R['query']>,
       body: (route.body ? parse(route.body, await readJson(context.request), 'body') : undefined) as Parsed<
         R['body']
       >,
@@ -56,6 +56,13 @@ export function publicEndpoint<R extends Route>(route: R, act: Act<PublicCall<R>
     const answer = result instanceof Answer ? result : new Answer(result, route.status);
     return json(route.response.parse(answer.data), answer.status, answer.headers);
   };
+}
+
+function queryOf(url: URL): Record<string, string> {
+  const query = Object.fromEntries(url.searchParams);
+  if (!Object.values(query).every(isStorable))
+    throw new HoldfastError('malformed', 'The query holds a NUL. Leave it out.');
+  return query;
 }
 
 function parse(schema: z.ZodType | undefined, value: unknown, where: 'query' | 'body'): unknown {

@@ -2,6 +2,9 @@ import { HoldfastError } from '../errors';
 
 export const MAX_JSON_BYTES = 1024 * 1024;
 
+/** Whether the database can keep a text as it is: no NUL, no half of a surrogate pair. */
+export const isStorable = (text: string): boolean => !text.includes('\0') && !/\p{Surrogate}/u.test(text);
+
 /** Reads a JSON body, counting bytes as they stream, so that a large body is refused before it is held in memory. */
 export async function readJson(request: Request, maxBytes = MAX_JSON_BYTES): Promise<unknown> {
   const type = request.headers.get('content-type') ?? '';
@@ -16,6 +19,8 @@ export async function readJson(request: Request, maxBytes = MAX_JSON_BYTES): Pro
   try {
     return JSON.parse(text, (key, value: unknown) => {
       if (key === '__proto__') throw new SyntaxError("a member named '__proto__'");
+      if (!isStorable(key) || (typeof value === 'string' && !isStorable(value)))
+        throw new SyntaxError('a text holds a NUL or half a surrogate pair');
       return value;
     });
   } catch (error) {

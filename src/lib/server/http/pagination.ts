@@ -1,4 +1,5 @@
 import { HoldfastError } from '../errors';
+import { isStorable } from './json-body';
 
 /** A page's end as an opaque cursor: the sort value and the id of its last row. */
 export function encodeCursor(sort: string | number, id: string): string {
@@ -12,7 +13,7 @@ export function decodeCursor(cursor: string | undefined): { sort: string | numbe
     if (Array.isArray(value) && value.length === 2) {
       const [sort, id] = value as [unknown, unknown];
       if (
-        (typeof sort === 'string' || typeof sort === 'number') &&
+        (typeof sort === 'number' || (typeof sort === 'string' && isStorable(sort))) &&
         typeof id === 'string' &&
         /^[0-9a-f-]{36}$/.test(id)
       )

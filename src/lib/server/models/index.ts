@@ -1,10 +1,17 @@
 import type { Sequelize } from 'sequelize';
 import { initAuditEvent } from './audit-event';
+import { initClasses } from './class';
 import { initCredential } from './credential';
+import { initFurnaces } from './furnace';
+import { initHandouts } from './handout';
+import { initKilns } from './kiln';
 import { initMembership } from './membership';
+import { initProfiles } from './profile';
 import { initSession } from './session';
 import { initSetupToken } from './setup-token';
 import { initStudio } from './studio';
+import { initTariffs } from './tariff';
+import { initThermocouples } from './thermocouple';
 import { initThrottle } from './throttle';
 import { initUser } from './user';
 
@@ -18,4 +25,11 @@ export function initModels(sequelize: Sequelize): void {
   initThrottle(sequelize);
   initSetupToken(sequelize);
   initAuditEvent(sequelize);
+  initTariffs(sequelize);
+  initThermocouples(sequelize);
+  initKilns(sequelize);
+  initFurnaces(sequelize);
+  initProfiles(sequelize);
+  initClasses(sequelize);
+  initHandouts(sequelize);
 }
