@@ -1,0 +1,46 @@
+import { useCallback, useEffect, useMemo, useState, type KeyboardEvent } from 'react';
+import { panned, within, zoomed, type TimeWindow } from './window';
+
+export interface TimeWindowControl {
+  readonly shown: TimeWindow;
+  readonly whole: TimeWindow;
+  readonly isZoomed: boolean;
+  show(wished: TimeWindow): void;
+  zoom(factor: number, aboutS?: number): void;
+  pan(share: number): void;
+  reset(): void;
+  /** `+` `-` `0` and arrows while the strip has the focus; true if the key was taken. */
+  key(event: KeyboardEvent): boolean;
+}
+
+/** What a zoomable strip shows of the whole firing, and the ways to change it by keys and buttons. */
+export function useTimeWindow(whole: TimeWindow): TimeWindowControl {
+  const [wished, setWished] = useState<TimeWindow | null>(null);
+  const { fromS, toS } = whole;
+  const all = useMemo(() => ({ fromS, toS }), [fromS, toS]);
+  const shown = useMemo(() => (wished ? within(wished, all) : all), [wished, all]);
+  useEffect(() => {
+    if (wished && shown.toS - shown.fromS >= all.toS - all.fromS) setWished(null);
+  }, [wished, shown, all]);
+  const zoom = useCallback(
+    (factor: number, aboutS = (shown.fromS + shown.toS) / 2) => setWished(zoomed(shown, all, factor, aboutS)),
+    [shown, all],
+  );
+  const pan = useCallback((share: number) => setWished(panned(shown, all, share)), [shown, all]);
+  const reset = useCallback(() => setWished(null), []);
+  const key = useCallback(
+    (event: KeyboardEvent): boolean => {
+      if (event.ctrlKey || event.metaKey || event.altKey) return false;
+      if (event.key === '+' || event.key === '=') zoom(1.5);
+      else if (event.key === '-') zoom(1 / 1.5);
+      else if (event.key === '0') reset();
+      else if (event.key === 'ArrowLeft' && wished) pan(-0.2);
+      else if (event.key === 'ArrowRight' && wished) pan(0.2);
+      else return false;
+      event.preventDefault();
+      return true;
+    },
+    [zoom, pan, reset, wished],
+  );
+  return { shown, whole: all, isZoomed: wished !== null, show: setWished, zoom, pan, reset, key };
+}
