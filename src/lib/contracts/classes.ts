@@ -1,4 +1,5 @@
-import { cautionSchema } from '../thermal/estimate-schema';
+import { SAFETY_NOTES, type SafetyNote } from '../profile/safety';
+import { CAUTION_CODES, cautionSchema } from '../thermal/estimate-schema';
 import { z } from '../zod';
 import {
   idSchema,
@@ -72,6 +73,12 @@ export const classRoutes = {
   }),
 };
 
+/** A caution of the estimate, or a danger of the work itself; both are read and acknowledged. */
+export const handoutCautionSchema = cautionSchema.extend({
+  code: z.enum([...CAUTION_CODES, ...(Object.keys(SAFETY_NOTES) as SafetyNote[])]),
+});
+export type HandoutCaution = z.infer<typeof handoutCautionSchema>;
+
 export const handoutSchema = z.strictObject({
   id: idSchema,
   profile: z.strictObject({ id: idSchema, name: z.string() }),
@@ -96,7 +103,7 @@ export const handoutSchema = z.strictObject({
   withdrawnReason: z.string(),
   state: z.enum(['ahead', 'in-force', 'over', 'withdrawn']),
   /** What a reader acknowledges, one by one. */
-  cautions: z.array(cautionSchema),
+  cautions: z.array(handoutCautionSchema),
 });
 export type Handout = z.infer<typeof handoutSchema>;
 

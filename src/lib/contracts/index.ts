@@ -1,6 +1,8 @@
 import { authRoutes } from './auth';
 import { classRoutes, handoutRoutes, peopleRoutes } from './classes';
 import { furnaceRoutes, kilnRoutes, tariffRoutes, thermocoupleRoutes } from './equipment';
+import { logRoutes } from './logs';
+import { materialRoutes } from './materials';
 import { estimateRoutes, profileRoutes } from './profiles';
 import { findingRoutes, reviewRoutes, runRoutes } from './runs';
 import type { Route } from './route';
@@ -13,11 +15,13 @@ export const routes = {
   furnaces: furnaceRoutes,
   thermocouples: thermocoupleRoutes,
   tariffs: tariffRoutes,
+  materials: materialRoutes,
   profiles: profileRoutes,
   estimates: estimateRoutes,
   classes: classRoutes,
   handouts: handoutRoutes,
   runs: runRoutes,
+  logs: logRoutes,
   findings: findingRoutes,
   review: reviewRoutes,
 } as const;

@@ -3,10 +3,13 @@ import { initAuditEvent } from './audit-event';
 import { initClasses } from './class';
 import { initCredential } from './credential';
 import { initFurnaces } from './furnace';
+import { initFindings } from './finding';
 import { initHandouts } from './handout';
 import { initKilns } from './kiln';
+import { initLogs } from './log';
 import { initMembership } from './membership';
 import { initProfiles } from './profile';
+import { initRuns } from './run';
 import { initSession } from './session';
 import { initSetupToken } from './setup-token';
 import { initStudio } from './studio';
@@ -32,4 +35,7 @@ export function initModels(sequelize: Sequelize): void {
   initProfiles(sequelize);
   initClasses(sequelize);
   initHandouts(sequelize);
+  initRuns(sequelize);
+  initLogs(sequelize);
+  initFindings(sequelize);
 }
