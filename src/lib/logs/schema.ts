@@ -137,6 +137,10 @@ export const readChannelSchema = z.strictObject({
   /** The file's own unit: `C`, `F`, `K`, `mV`, `%`, `kW`, … or an empty string where it names none. */
   unit: z.string(),
   thermocouple: thermocoupleTypeSchema.nullable(),
+  /** For emf: where the reference junction's temperature comes from, a channel of this report or a fixed °C. */
+  junction: z
+    .union([z.strictObject({ channel: z.number().int().min(0) }), z.strictObject({ tempC: z.number() })])
+    .nullable(),
   samples: z.number().int().min(0),
   missing: z.number().int().min(0),
   min: maybe,
