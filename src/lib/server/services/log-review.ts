@@ -76,7 +76,7 @@ function reviewChannels(report: StoredReport, series: LogSeries): ReviewChannel[
     role: channel.role,
     quantity: channel.quantity === 'emf' ? 'temperature' : channel.quantity,
     timeMs: series.timeMs,
-    value: celsius[index] ?? new Float64Array(series.timeMs.length).fill(Number.NaN),
+    value: celsius[index] ?? series.values[index] ?? new Float64Array(0),
     openIndexes: series.open[index] ?? [],
     rangeC: sensorRangeC(channel.thermocouple),
   }));

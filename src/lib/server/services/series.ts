@@ -76,7 +76,9 @@ async function measured(record: RunRecord, log: LogRecord, fromS: number, toS: n
   );
   const timeS = Array.from(window.timeMs, (ms) => round(runSeconds(log, ms), 3));
   const [min, max, mean] = [window.min, window.max, window.mean].map((columns) =>
-    toCelsius(log.report.channels, columns),
+    toCelsius(log.report.channels, columns).map(
+      (column, index) => column ?? columns[index] ?? new Float64Array(0),
+    ),
   );
   const column = (columns: readonly Float64Array[] | undefined, index: number) =>
     Array.from(columns?.[index] ?? [], (value) => (Number.isNaN(value) ? null : round(value, 3)));
