@@ -48,10 +48,3 @@ export function near(instant: string | Date, timeZone: string, now: Date): strin
   });
   return `${day.replace(',', '')}, ${time}`;
 }
-
-/** `1 h 00`, `14 h 14`, `35 min`: a length of time to the minute. */
-export function hoursAndMinutes(seconds: number): string {
-  const minutes = Math.round(seconds / 60);
-  if (minutes < 60) return `${minutes} min`;
-  return `${Math.floor(minutes / 60)} h ${String(minutes % 60).padStart(2, '0')}`;
-}

@@ -1,11 +1,17 @@
 import {
+  cIntervalToF,
+  cToF,
   formatInterval,
   formatLength,
+  formatMass,
   formatNumber,
   formatRate,
   formatTemperature,
+  KG_PER_LB,
+  M_PER_IN,
   parseInterval,
   parseLength,
+  parseMass,
   parseNumber,
   parseRate,
   parseTemperature,
@@ -15,7 +21,7 @@ import {
 import { z } from '~/lib/zod';
 
 /** What a field holds. Whatever is typed, the form keeps °C, metres, °C/h, seconds and shares of one. */
-export type Kind = 'length' | 'temperature' | 'interval' | 'rate' | 'percent' | 'number';
+export type Kind = 'length' | 'mass' | 'temperature' | 'interval' | 'rate' | 'percent' | 'number';
 
 const asNumber = (parsed: Parsed<number | 'flat-out' | 'coast'>): Parsed =>
   !parsed.ok || typeof parsed.value === 'number'
@@ -27,6 +33,8 @@ export function readQuantity(text: string, kind: Kind, units: UnitPreferences): 
   switch (kind) {
     case 'length':
       return parseLength(text, units.length);
+    case 'mass':
+      return parseMass(text, units.mass);
     case 'temperature':
       return parseTemperature(text, units.temperature);
     case 'interval':
@@ -47,6 +55,8 @@ export function assumedUnit(kind: Kind, units: UnitPreferences): string {
   switch (kind) {
     case 'length':
       return units.length;
+    case 'mass':
+      return units.mass;
     case 'temperature':
     case 'interval':
       return `°${units.temperature}`;
@@ -66,12 +76,14 @@ export function fieldText(value: number | null | undefined, kind: Kind, units: U
   if (value === null || value === undefined) return '';
   switch (kind) {
     case 'length':
-      return units.length === 'in' ? tidy(value / 0.0254, 3) : tidy(value * 1000, 2);
+      return units.length === 'in' ? tidy(value / M_PER_IN, 3) : tidy(value * 1000, 2);
+    case 'mass':
+      return tidy(units.mass === 'lb' ? value / KG_PER_LB : value, 3);
     case 'temperature':
-      return tidy(units.temperature === 'F' ? (value * 9) / 5 + 32 : value, 1);
+      return tidy(units.temperature === 'F' ? cToF(value) : value, 1);
     case 'interval':
     case 'rate':
-      return tidy(units.temperature === 'F' ? (value * 9) / 5 : value, 1);
+      return tidy(units.temperature === 'F' ? cIntervalToF(value) : value, 1);
     case 'percent':
       return tidy(value * 100, 2);
     case 'number':
@@ -87,6 +99,8 @@ export function understoodAs(text: string, kind: Kind, units: UnitPreferences): 
   switch (kind) {
     case 'length':
       return formatLength(read.value, units.length);
+    case 'mass':
+      return formatMass(read.value, units.mass);
     case 'temperature':
       return formatTemperature(read.value, units.temperature);
     case 'interval':

@@ -88,3 +88,9 @@ export async function attempt<T>(work: () => Promise<T>): Promise<Attempt<T>> {
     return { ok: false, status: error.status, message: error.message, errors };
   }
 }
+
+/** The change that a form for putting away or bringing back asks for. */
+export const archivingOf = (form: Form): { revision: number; change: { archived: boolean } } => ({
+  revision: Number(form.text('revision')),
+  change: { archived: form.text('action') === 'archive' },
+});
