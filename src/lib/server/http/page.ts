@@ -39,3 +39,8 @@ export function queryOf<S extends z.ZodObject>(schema: S, url: URL): z.output<S>
   const result = schema.safeParse(Object.fromEntries(known));
   return result.success ? result.data : schema.parse({});
 }
+
+/** A path of this site from `?next=`; whatever could lead elsewhere leads to the first page. */
+export function ownPath(text: string | null): string {
+  return text !== null && /^\/(?![/\\])[\x21-\x7e]{0,2000}$/.test(text) ? text : '/';
+}
