@@ -7,5 +7,7 @@ declare namespace App {
     /** What pages show of the person: name, studio, units, theme. Null when nobody is signed in. */
     me: import('./lib/contracts/auth').Me | null;
     requestId: string;
+    /** What an error page shows; null where nothing went wrong. */
+    problem: { readonly status: number; readonly title: string; readonly detail: string } | null;
   }
 }

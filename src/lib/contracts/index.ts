@@ -6,9 +6,11 @@ import { materialRoutes } from './materials';
 import { estimateRoutes, profileRoutes } from './profiles';
 import { findingRoutes, reviewRoutes, runRoutes } from './runs';
 import type { Route } from './route';
+import { siteRoutes } from './site';
 
 /** Every call of the HTTP contract, by noun. The OpenAPI document and the typed client are made from this. */
 export const routes = {
+  site: siteRoutes,
   auth: authRoutes,
   people: peopleRoutes,
   kilns: kilnRoutes,
