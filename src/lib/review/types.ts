@@ -153,7 +153,7 @@ export interface ComputedFinding {
   readonly byCPerH: number | null;
   /** Time in the hold's band that this finding cost. */
   readonly holdLostS: number | null;
-  /** Index of the finding that caused this one; null for a cause of its own. */
+  /** Index into the review's findings of what caused this; null for a cause of its own. */
   readonly because: number | null;
   /** The plan asks for it (an opening at a segment that says drain). */
   readonly expected: boolean;
@@ -208,7 +208,10 @@ export interface ReviewResult {
   readonly carried: Curve;
   /** The plan as it was made. */
   readonly planned: Curve;
+  /** One cause, one finding, in order of time. `because` is null on all of them. */
   readonly findings: readonly ComputedFinding[];
+  /** What the definitions would also catch but one of `findings` explains: for the record, not to be shown as findings. */
+  readonly consequences: readonly ComputedFinding[];
   readonly leaps: readonly ClockLeap[];
   readonly figures: ReviewFigures;
   /** When the run ended (the end of the last actual hold), or the last sample of a log that stopped before. */
