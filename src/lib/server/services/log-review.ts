@@ -64,7 +64,7 @@ export function reviewLog(input: {
       clockEvents: report.clockEvents,
     },
     review: storedReview(frozen, report, result, prediction),
-    findings: result.findings.map((finding) => newFinding(finding, frozen, report, input.logId)),
+    findings: result.findings.map((finding) => newFinding(finding, frozen, input.logId)),
   };
 }
 
@@ -113,6 +113,7 @@ function storedReview(
       text: describeSegment(
         segment,
         result.findings.filter((finding) => finding.segment === index),
+        words(frozen),
       ),
     })),
     figures: {
@@ -147,13 +148,10 @@ function energyPerPowerHour(frozen: Frozen, report: StoredReport): number | null
   return (kiln.ratedKW * kiln.ratedPowerShare * supply) / 100;
 }
 
-function newFinding(
-  finding: ComputedFinding,
-  frozen: Frozen,
-  report: StoredReport,
-  logId: string,
-): NewFinding {
-  const channel = report.channels.find((one) => one.id === finding.channelId);
+/** The texts kept with a review are in °C; screens in °F say the same from the figures. */
+const words = (frozen: Frozen) => ({ profile: frozen.profile, temperature: 'C' as const });
+
+function newFinding(finding: ComputedFinding, frozen: Frozen, logId: string): NewFinding {
   return {
     id: randomUUID(),
     logId,
@@ -171,7 +169,7 @@ function newFinding(
     byCPerH: finding.byCPerH,
     holdLostS: finding.holdLostS,
     expected: finding.expected,
-    text: describeFinding(finding, { profile: frozen.profile, channelName: channel?.name ?? '' }),
+    text: describeFinding(finding, words(frozen)),
     remark: '',
     followUp: null,
   };

@@ -24,7 +24,10 @@ export async function getSeries(actor: Actor, runId: string, query: Query): Prom
   const prediction = predictionOf({ ...frozen, load: frozen.load ?? emptyLoad() });
   const planned = plannedCurve(
     frozen.profile,
-    prediction.segments.map((segment) => segment.plannedEndS - segment.plannedStartS),
+    prediction.segments.map(
+      ({ plannedStartS, plannedEndS }, index) =>
+        plannedEndS - plannedStartS - (frozen.profile.segments[index]?.holdS ?? 0),
+    ),
   );
   const log = record.currentLogId ? await findLog(actor.studioId, { id: record.currentLogId }) : null;
   const endS = Math.max(prediction.predictedS, prediction.plannedS, log ? lastSampleS(log) : 0);
