@@ -12,6 +12,22 @@ export const kilnDefaults = {
     'Seams and spy holes of a closed kiln, 5-10 % of its heat',
     'common-practice',
   ),
+  /** Heating elements, by the rated power. */
+  elementsKgPerKW: constant(0.4, 'kg/kW', 'Wound wire at about 1.5 W/cm² of surface, recalled', 'memory'),
+  elementsHeatCapacityJPerKgK: constant(
+    650,
+    'J/(kg·K)',
+    'Iron-chromium-aluminium alloys, recalled',
+    'memory',
+  ),
+  /** Convection between the air of the chamber and what stands in it. */
+  electricConvectionWPerM2K: constant(
+    5,
+    'W/(m²·K)',
+    'Still air in a closed box, handbook, recalled',
+    'memory',
+  ),
+  gasConvectionWPerM2K: constant(15, 'W/(m²·K)', 'Burner gases at a few m/s, handbook, recalled', 'memory'),
   openFromC: constant(
     120,
     '°C',

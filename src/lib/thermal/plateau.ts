@@ -1,0 +1,80 @@
+import type { Body } from './body';
+import { WATER_BOILS_C } from './constants';
+
+/** A node of a wet body within a stage: on one side of the plateau, held on it, or through it and dry. */
+const BESIDE = 0;
+const HELD = 1;
+const THROUGH = 2;
+
+/** Store that holds a node at the boiling point, W/K: so large that no flow moves it by a nanokelvin. */
+const HOLDING_W_PER_K = 1e15;
+
+/**
+ * Elimination of a body that holds water, each node by its `phase`:
+ * beside the plateau its water only adds heat capacity; held it stays at 100 °C and whatever flows in evaporates;
+ * through it, wet·(100 − Tₙ) + L + dry·(T − 100) = heat. All three are linear in the node's temperature.
+ */
+export function eliminateWet(body: Body, carry: number, stageS: number): void {
+  const { link, inverse, alpha, beta, nodes, first } = body;
+  const { tempC, stageOneW, store, wetStore, latentJ, phase } = body;
+  let next = body.farC;
+  let nextAlpha = 0;
+  for (let i = nodes - 1; i >= first; i--) {
+    let hold = wetStore[i]!;
+    let baseW = hold * tempC[i]!;
+    if (phase[i] === HELD) {
+      hold = HOLDING_W_PER_K;
+      baseW = HOLDING_W_PER_K * WATER_BOILS_C;
+    } else if (phase[i] === THROUGH) {
+      const warmingW = hold * (WATER_BOILS_C - tempC[i]!);
+      hold = store[i]!;
+      baseW = hold * WATER_BOILS_C - warmingW - latentJ[i]! / stageS;
+    }
+    const onward = link[i + 1]!;
+    const pivot = 1 / (hold + link[i]! + onward * (1 - nextAlpha));
+    next = (baseW + carry * stageOneW[i]! + onward * next) * pivot;
+    nextAlpha = link[i]! * pivot;
+    inverse[i] = pivot;
+    alpha[i] = nextAlpha;
+    beta[i] = next;
+  }
+  body.slopeWPerK = link[first]! * (1 - nextAlpha);
+  body.offsetW = link[first]! * next;
+}
+
+/**
+ * Whether each wet node ended the stage where its phase says, moving those that did not.
+ *
+ * @param flowsW net heat flows of this stage; `carry` brings in those of the first
+ * @returns true if a phase changed, so that the stage must be solved again
+ */
+export function phasesChanged(body: Body, carry: number, stageS: number, flowsW: Float64Array): boolean {
+  const { phase, latentJ, stageC, wetStore, tempC, stageOneW } = body;
+  let changed = false;
+  for (let i = body.first; i < body.nodes; i++) {
+    const leftJ = latentJ[i]!;
+    if (leftJ <= 0) continue;
+    let now: number = BESIDE;
+    if (phase[i] === HELD) {
+      const takenW = flowsW[i]! + carry * stageOneW[i]!;
+      const boilingJ = (takenW - wetStore[i]! * (WATER_BOILS_C - tempC[i]!)) * stageS;
+      now = boilingJ < 0 ? BESIDE : boilingJ > leftJ ? THROUGH : HELD;
+    } else if (phase[i] === THROUGH) now = stageC[i]! < WATER_BOILS_C ? HELD : THROUGH;
+    else now = stageC[i]! > WATER_BOILS_C ? HELD : BESIDE;
+    if (now !== phase[i]) {
+      phase[i] = now;
+      changed = true;
+    }
+  }
+  return changed;
+}
+
+/** After a step: what has dried has no phase, and a body without water left is an ordinary one. */
+export function settleDry(body: Body): void {
+  let wet = false;
+  for (let i = body.first; i < body.nodes; i++) {
+    if (body.latentJ[i]! > 0) wet = true;
+    else body.phase[i] = BESIDE;
+  }
+  body.wet = wet;
+}

@@ -1,0 +1,194 @@
+import type { Profile, Segment } from '../profile/schema';
+import { J_PER_KWH } from './constants';
+import { GrowingSeries } from './growing-series';
+import type { KilnPlate } from './kiln-schema';
+import type { Load } from './load-schema';
+import { DEFAULT_STEPS, March, type StepSettings, type Watch } from './march';
+import { MouldRecorder } from './mould-recorder';
+import { PatternFire } from './pattern-fire';
+import { plannedMoments, plannedSeries } from './planned-moments';
+import { programmerOf } from './programmer';
+import { type FiringModel, firingModelOf } from './resolve';
+import type { SegmentMoments, Simulation } from './simulation';
+import { energySplit, heatSnapshot } from './stored-heat';
+
+/** What a firing is computed from. */
+export interface FiringInput {
+  profile: Profile;
+  kiln: KilnPlate;
+  load: Load;
+  ambientC: number;
+}
+
+/** Lag above which the kiln is said not to follow, K. */
+const FOLLOWS_WITHIN_C = 2;
+/** How long after its end a firing is followed to find when the kiln may be opened, s. */
+const COOLING_HORIZON_S = 7 * 24 * 3600;
+
+/** Records a firing as the march takes it: the curves, the segments and what the pattern does meanwhile. */
+class FiringRecorder implements Watch {
+  readonly model: FiringModel;
+  readonly segments: SegmentMoments[] = [];
+  readonly moulds: MouldRecorder[];
+  readonly timeS = new GrowingSeries();
+  readonly chamberC = new GrowingSeries();
+  readonly thermocoupleC = new GrowingSeries();
+  readonly powerKW = new GrowingSeries();
+  readonly energyKWh = new GrowingSeries();
+  readonly patternHeatKW = new GrowingSeries();
+  readonly segmentIndex = new GrowingSeries();
+  readonly #fire: PatternFire;
+  readonly #kiln: KilnPlate;
+  #draining = false;
+  #readingC: number;
+  #lastC: number;
+  #lastInputJ = 0;
+  #segmentInputJ = 0;
+
+  constructor(model: FiringModel, kiln: KilnPlate) {
+    this.model = model;
+    this.#kiln = kiln;
+    this.#fire = new PatternFire(model);
+    this.moulds = model.moulds.map((mould) => new MouldRecorder(mould));
+    this.#lastC = model.chamber.tempC;
+    this.#readingC = this.#lastC + kiln.thermocoupleOffsetC;
+    this.#record(0, 0, 0, 0);
+  }
+
+  segmentBegins(index: number, segment: Segment, atS: number): void {
+    this.#draining = segment.drain;
+    this.#fire.setVent(segment.vent === 'open');
+    this.#segmentInputJ = this.model.chamber.booked.inputJ;
+    this.segments[index] = {
+      plannedStartS: 0,
+      plannedRampEndS: 0,
+      plannedEndS: 0,
+      startS: atS,
+      rampEndS: atS,
+      endS: atS,
+      arrived: false,
+      energyKWh: 0,
+      kilnLimited: false,
+      largestLagC: 0,
+    };
+  }
+
+  rampEnds(index: number, atS: number): void {
+    const moments = this.segments[index];
+    if (moments) moments.plannedRampEndS = atS - moments.startS;
+  }
+
+  arrives(index: number, atS: number): void {
+    const moments = this.segments[index];
+    if (!moments || moments.arrived) return;
+    moments.arrived = true;
+    moments.rampEndS = atS;
+  }
+
+  segmentEnds(index: number, atS: number): void {
+    const moments = this.segments[index];
+    if (!moments) return;
+    moments.endS = atS;
+    if (!moments.arrived) moments.rampEndS = atS;
+    moments.energyKWh = (this.model.chamber.booked.inputJ - this.#segmentInputJ) / J_PER_KWH;
+  }
+
+  stepTaken(index: number, atS: number, stepS: number, lagC: number | null): void {
+    const moments = this.segments[index];
+    if (moments && lagC !== null) {
+      moments.largestLagC = Math.max(moments.largestLagC, Math.abs(lagC));
+      moments.kilnLimited = moments.largestLagC > FOLLOWS_WITHIN_C;
+    }
+    const heatKW = this.model.chamber.sourceW / 1000;
+    this.#fire.afterStep(stepS, (mould, airShare) =>
+      (this.moulds[mould] as MouldRecorder).step(stepS, this.#draining, airShare),
+    );
+    this.#record(atS, stepS, index, heatKW);
+  }
+
+  #record(atS: number, stepS: number, index: number, patternHeatKW: number): void {
+    const { tempC, booked } = this.model.chamber;
+    this.#readingC = this.#readAfter(stepS, tempC);
+    this.timeS.push(atS);
+    this.chamberC.push(tempC);
+    this.thermocoupleC.push(this.#readingC);
+    this.powerKW.push(stepS > 0 ? (booked.inputJ - this.#lastInputJ) / stepS / 1000 : 0);
+    this.energyKWh.push(booked.inputJ / J_PER_KWH);
+    this.patternHeatKW.push(patternHeatKW);
+    this.segmentIndex.push(index);
+    this.#lastC = tempC;
+    this.#lastInputJ = booked.inputJ;
+  }
+
+  /** First-order lag behind a chamber that moves straight over the step, exactly: τ·R′ = T + offset − R. */
+  #readAfter(stepS: number, tempC: number): number {
+    const { thermocoupleLagS: lagS, thermocoupleOffsetC: offsetC } = this.#kiln;
+    if (lagS <= 0 || stepS <= 0) return tempC + offsetC;
+    const slope = (tempC - this.#lastC) / stepS;
+    const behindC = this.#readingC - (this.#lastC + offsetC) + slope * lagS;
+    return tempC + offsetC - slope * lagS + behindC * Math.exp(-stepS / lagS);
+  }
+}
+
+/**
+ * Fires a load in a kiln by a profile, under ideal control within the kiln's power.
+ *
+ * @param input a valid profile, a kiln's plate, its load and the room's temperature (°C)
+ * @param steps how finely time is taken; the default keeps each step within 1 K of what the step before foresaw
+ * @throws RangeError where the materials table lacks a material that is named
+ */
+export function simulate(input: FiringInput, steps: StepSettings = DEFAULT_STEPS): Simulation {
+  const { profile, kiln, load, ambientC } = input;
+  const model = firingModelOf({ kiln, load, ambientC, startC: profile.startC });
+  const start = heatSnapshot(model.chamber);
+  const recorder = new FiringRecorder(model, kiln);
+  const programmer = programmerOf(profile, kiln.waitBandC);
+  const march = new March(model.chamber, programmer, kiln.thermocoupleOffsetC, recorder, steps);
+  march.run();
+  const energy = energySplit(model, start);
+  const predictedS = march.atS;
+  const segments = plannedMoments(profile, recorder.segments);
+  const timeS = recorder.timeS.toArray();
+  const chamberC = recorder.chamberC.toArray();
+  return {
+    ...input,
+    timeS,
+    plannedC: plannedSeries(profile, segments, timeS),
+    chamberC,
+    thermocoupleC: recorder.thermocoupleC.toArray(),
+    powerKW: recorder.powerKW.toArray(),
+    energyKWh: recorder.energyKWh.toArray(),
+    fullPowerKW: model.kiln.fullInputW / 1000,
+    patternHeatKW: recorder.patternHeatKW.toArray(),
+    segmentAt: Uint8Array.from(recorder.segmentIndex.toArray()),
+    moulds: recorder.moulds.map((mould) => mould.trace()),
+    segments,
+    plannedS: segments.at(-1)?.plannedEndS ?? 0,
+    predictedS,
+    openableS: openableS(march, kiln.openAtC, timeS, chamberC),
+    energy,
+    steps: march.steps,
+  };
+}
+
+/** When the chamber comes down to the opening temperature for good: within the firing, or cooling on after it. */
+function openableS(
+  march: March,
+  openAtC: number,
+  timeS: Float64Array,
+  chamberC: Float64Array,
+): number | null {
+  const last = chamberC.length - 1;
+  if ((chamberC[last] ?? Infinity) > openAtC) {
+    march.chamber.sourceW = 0;
+    return march.coolTo(openAtC, COOLING_HORIZON_S);
+  }
+  for (let i = last; i > 0; i--) {
+    const beforeC = chamberC[i - 1] ?? 0;
+    const afterC = chamberC[i] ?? 0;
+    if (beforeC <= openAtC) continue;
+    const fromS = timeS[i - 1] ?? 0;
+    return fromS + (((timeS[i] ?? 0) - fromS) * (beforeC - openAtC)) / (beforeC - afterC);
+  }
+  return 0;
+}
