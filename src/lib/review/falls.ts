@@ -126,7 +126,7 @@ function cutFrom(bench: Bench, power: Grid | null, start: number, turn: number):
   const shouldC = Math.min(bench.setpoint[start]!, smooth.value[start]!);
   const lostC = shouldC - smooth.value[turn]!;
   if (endS - startS < limits.powerCutMinS || !(lostC >= limits.powerCutMinC)) return null;
-  const openEnded = bench.logEndS - endS < 2 * bench.clock.gapLimitS;
+  const openEnded = bench.runEndS === bench.logEndS && bench.logEndS - endS < 2 * bench.clock.gapLimitS;
   if (!openEnded && !resumes(smooth, turn)) return null;
   const off = power ? powerIsOff(power, startS, endS) : null;
   if (off === false) return null;
@@ -148,12 +148,17 @@ function cutFrom(bench: Bench, power: Grid | null, start: number, turn: number):
   });
 }
 
+/** About a planned way down nothing is read as a loss of heat. */
+const PLANNED_FALL_S = 300;
+
 /** Whether the plan has the kiln heated or held at a time: not on the way down. */
 function heats(bench: Bench, atS: number): boolean {
   const one = bench.fired[segmentAt(bench.fired, atS)];
   if (!one) return false;
-  if (one.leg.direction >= 0) return true;
-  return one.arrivedS !== null && atS > one.arrivedS + 300 && atS < endIn(bench, one) - 60;
+  const next = bench.fired[one.leg.index + 1]?.leg;
+  const fallsNext = one.endS !== null && (next === undefined || next.direction < 0);
+  if (fallsNext && atS > endIn(bench, one) - PLANNED_FALL_S) return false;
+  return one.leg.direction >= 0 || (one.arrivedS !== null && atS > one.arrivedS + PLANNED_FALL_S);
 }
 
 /** Highest node within a window about the beginning of a fall. */
