@@ -1,7 +1,8 @@
 import { QueryTypes } from 'sequelize';
 import { roleSchema, type Role } from '~/lib/contracts/common';
 import { z } from '~/lib/zod';
-import { database } from '../database';
+import { database, type Tx } from '../database';
+import { MembershipModel } from '../models/membership';
 import { likeAnywhere } from './row';
 
 export interface PersonWithRoles {
@@ -42,4 +43,15 @@ export async function listPeople(
     },
   );
   return rows.map((row) => rowSchema.parse(row));
+}
+
+/** Those of `userIds` who belong to the studio now. */
+export async function membersAmong(studioId: string, userIds: readonly string[], tx?: Tx): Promise<string[]> {
+  if (userIds.length === 0) return [];
+  const rows = await MembershipModel.findAll({
+    attributes: ['userId'],
+    where: { studioId, userId: [...userIds], endedAt: null },
+    ...(tx ? { transaction: tx } : {}),
+  });
+  return rows.map((row) => row.userId);
 }

@@ -25,3 +25,7 @@ export function keptRow(
   );
   return keptInstants.parse(Object.fromEntries(left));
 }
+
+/** A timestamp column as text in SQL, for instants inside JSON: RFC 3339, UTC, milliseconds. */
+export const instantOf = (column: string): string =>
+  `to_char(${column} at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"')`;

@@ -1,7 +1,9 @@
 import type { ListQuery, Role } from '~/lib/contracts/common';
 import { requireRole, type Actor } from '../auth/actor';
+import type { Tx } from '../database';
+import { notFound } from '../errors';
 import { decodeCursor, page } from '../http/pagination';
-import { listPeople, type PersonWithRoles } from '../repositories/people';
+import { listPeople, membersAmong, type PersonWithRoles } from '../repositories/people';
 
 /** People of the actor's studio, by name, without their addresses. */
 export async function peopleOfStudio(
@@ -16,4 +18,11 @@ export async function peopleOfStudio(
     role: query.role,
   });
   return page(rows, query.limit, (person) => person.name.toLowerCase());
+}
+
+/** Throws 404 unless each of these people belongs to the actor's studio now. */
+export async function requirePeople(actor: Actor, ids: readonly string[], tx: Tx): Promise<void> {
+  const wanted = [...new Set(ids)];
+  const known = new Set(await membersAmong(actor.studioId, wanted, tx));
+  if (wanted.some((id) => !known.has(id))) throw notFound('person');
 }

@@ -1,0 +1,24 @@
+import { QueryTypes } from 'sequelize';
+import { z } from '~/lib/zod';
+import { database, type Tx } from '../database';
+
+const rulesSchema = z.strictObject({
+  timeZone: z.string(),
+  /** Whether an author may approve their own version: a studio of one. */
+  authorsApprove: z.boolean(),
+  /** When people are there, in local minutes of the day. */
+  attendedFromMinute: z.number().int(),
+  attendedUntilMinute: z.number().int(),
+});
+/** How a studio works, as far as reviews and estimates go by it. */
+export type StudioRules = z.infer<typeof rulesSchema>;
+
+export async function studioRules(studioId: string, tx?: Tx): Promise<StudioRules> {
+  const rows = await database().query(
+    `select time_zone as "timeZone", authors_approve as "authorsApprove",
+       attended_from_minute as "attendedFromMinute", attended_until_minute as "attendedUntilMinute"
+     from studios where id = $studioId`,
+    { type: QueryTypes.SELECT, bind: { studioId }, ...(tx ? { transaction: tx } : {}) },
+  );
+  return rulesSchema.parse(rows[0]);
+}

@@ -1,0 +1,120 @@
+import type { z } from '~/lib/zod';
+import type { Kiln } from '~/lib/contracts/equipment';
+import type { estimateRequestSchema, estimateRoutes } from '~/lib/contracts/profiles';
+import { findMaterial } from '~/lib/materials';
+import { co2Of, costOf, tariffFits, zoneOffset, type TariffPlan } from '~/lib/planning';
+import type { Profile } from '~/lib/profile/schema';
+import { issuesOf } from '~/lib/profile/validate';
+import type { Caution, Estimate } from '~/lib/thermal/estimate-schema';
+import { estimateOf } from '~/lib/thermal/estimate';
+import type { KilnPlate } from '~/lib/thermal/kiln-schema';
+import { loadSchema, type Load } from '~/lib/thermal/load-schema';
+import { simulate } from '~/lib/thermal/simulate';
+import type { Simulation } from '~/lib/thermal/simulation';
+import { isOnlyStudent, type Actor } from '../auth/actor';
+import type { Tx } from '../database';
+import { notFound, notValid, type Issue } from '../errors';
+import { studioRules } from '../repositories/studio-rules';
+import { loadIssues } from './content-check';
+import { kilnFor, plateOf } from './kilns';
+import { tariffFor } from './tariffs';
+
+type Request = z.output<typeof estimateRequestSchema>;
+type Query = z.output<(typeof estimateRoutes)['estimate']['query']>;
+
+/** Temperature of the room where nobody says another. */
+const ROOM_C = 20;
+
+/**
+ * What the models say of a firing: the figure of record. Nothing is kept. Costs are not shown to students.
+ *
+ * @param now the start that prices by time of use are taken from where the request names none
+ */
+export async function estimateFiring(
+  actor: Actor,
+  request: Request,
+  query: Query,
+  now = new Date(),
+): Promise<Estimate> {
+  const kiln = request.kilnId === undefined ? null : await kilnFor(actor, request.kilnId);
+  const plate = kiln ? plateOf(kiln) : request.kiln;
+  if (!plate) throw notValid('Say which kiln.', [{ path: 'kilnId', message: 'a kiln is needed' }]);
+  const load = request.load ?? loadSchema.parse({});
+  requireComputable(request.profile, plate, load, query);
+  const plan = await planFor(actor, request, kiln, plate);
+  const { timeZone } = await studioRules(actor.studioId);
+  const simulation = simulate({ profile: request.profile, kiln: plate, load, ambientC: request.ambientC });
+  const found = estimateOf(simulation, { mouldIndex: query.mould ?? null, cautions: [] });
+  const startMs = request.startAt === undefined ? now.getTime() : Date.parse(request.startAt);
+  return { ...found, ...priced(simulation, plan, startMs, timeZone, actor) };
+}
+
+/** Cautions of a version in a kiln, as its approval and its handouts go by them. */
+export async function cautionsOf(
+  actor: Actor,
+  content: { readonly profile: Profile; readonly kilnId: string; readonly load: Load | null },
+  tx: Tx,
+): Promise<Caution[]> {
+  const plate = plateOf(await kilnFor(actor, content.kilnId, tx));
+  const load = content.load ?? loadSchema.parse({});
+  const simulation = simulate({ profile: content.profile, kiln: plate, load, ambientC: ROOM_C });
+  return estimateOf(simulation, { mouldIndex: null, cautions: [] }).cautions;
+}
+
+function priced(
+  simulation: Simulation,
+  plan: TariffPlan | null,
+  startMs: number,
+  timeZone: string,
+  actor: Actor,
+): Pick<Estimate, 'cost' | 'co2Kg'> {
+  const { kiln } = simulation;
+  const energy = kiln.energy === 'gas' ? kiln.fuel : 'electricity';
+  const { co2Kg } = co2Of(energy, simulation.energy.inKWh, plan);
+  const shown = plan !== null && !isOnlyStudent(actor);
+  return {
+    co2Kg,
+    cost: shown ? costOf(plan, simulation, startMs, zoneOffset(timeZone)).cost : null,
+  };
+}
+
+/** The tariff that the request names, else the kiln's own where it prices what the kiln burns. */
+async function planFor(
+  actor: Actor,
+  request: Request,
+  kiln: Kiln | null,
+  plate: KilnPlate,
+): Promise<TariffPlan | null> {
+  if (request.tariffId !== undefined) {
+    const tariff = isOnlyStudent(actor) ? null : await tariffFor(actor, request.tariffId);
+    if (!tariff) throw notFound('tariff');
+    if (!tariffFits(tariff.plan, plate))
+      throw notValid(`${tariff.name} prices ${tariff.plan.energy}, which this kiln does not use.`, [
+        { path: 'tariffId', message: `a tariff of ${tariff.plan.energy}` },
+      ]);
+    return tariff.plan;
+  }
+  const own = kiln ? await tariffOfKiln(actor, kiln) : null;
+  return own && tariffFits(own, plate) ? own : null;
+}
+
+async function tariffOfKiln(actor: Actor, kiln: Kiln): Promise<TariffPlan | null> {
+  return (await tariffFor(actor, kiln.tariffId))?.plan ?? null;
+}
+
+/** What the schemas of the request cannot say: planned length, materials that the table has, a mould that is there. */
+function requireComputable(profile: Profile, plate: KilnPlate, load: Load, query: Query): void {
+  const issues: Issue[] = [
+    ...issuesOf(profile).map((issue) => ({ ...issue, path: `profile.${issue.path}` })),
+    ...plate.liningLayers.flatMap(({ material }, index) =>
+      findMaterial('linings', material)
+        ? []
+        : [{ path: `kiln.liningLayers.${index}.material`, message: `no lining is called '${material}'` }],
+    ),
+    ...loadIssues(load),
+  ];
+  if (query.mould !== undefined && query.mould >= load.moulds.length)
+    issues.push({ path: 'mould', message: `the load has ${load.moulds.length} lines of moulds` });
+  const first = issues[0];
+  if (first) throw notValid(`This cannot be computed. ${first.path}: ${first.message}.`, issues);
+}
