@@ -54,6 +54,8 @@ export const STATES = {
   'in-force': ['In force', 'done'],
   over: ['Over', 'off'],
   withdrawn: ['Withdrawn', 'off'],
+  running: ['Running', 'done'],
+  archived: ['Archived', 'off'],
 } as const satisfies Record<string, readonly [string, Look]>;
 export type StateCode = keyof typeof STATES;
 
@@ -74,3 +76,10 @@ export const CONFIDENCE_NAMES = {
 
 /** `3 segments`, `1 segment`. */
 export const count = (n: number, one: string, many = `${one}s`): string => `${n} ${n === 1 ? one : many}`;
+
+export const EVENT_NAMES = {
+  submitted: 'submitted for review',
+  approved: 'approved and sealed',
+  returned: 'returned',
+  retired: 'retired',
+} as const;

@@ -1,5 +1,6 @@
 import { materials } from '~/lib/materials';
 import type { Actor } from '../auth/actor';
+import { getProfile, listProfiles } from '../services/profiles';
 import { listTariffs } from '../services/tariffs';
 import { listThermocouples } from '../services/thermocouples';
 
@@ -25,4 +26,21 @@ export async function kilnChoices(actor: Actor) {
     tariffChoices(actor),
   ]);
   return { thermocouples: thermocouples.items.map(named), tariffs, linings: materials.linings.map(named) };
+}
+
+/** The newest approved version of each profile in use, for handing out and for planning runs. */
+export async function approvedVersions(actor: Actor) {
+  const { items } = await listProfiles(actor, { limit: MOST, archived: 'no', state: 'approved' });
+  const found = await Promise.all(
+    items.map(async ({ id, name, latest }) => {
+      const versions = latest.state === 'approved' ? [latest] : (await getProfile(actor, id)).versions;
+      const newest = versions
+        .filter((version) => version.state === 'approved')
+        .sort((a, b) => b.number - a.number)[0];
+      return newest
+        ? [{ id: newest.id, kilnId: newest.kilnId, text: `${name}, version ${newest.number}` }]
+        : [];
+    }),
+  );
+  return found.flat();
 }
