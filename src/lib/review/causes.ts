@@ -52,7 +52,8 @@ export function sortedByCause(bench: Bench, candidates: readonly Candidate[]): S
     if (cause) owed.push({ of: one, to: cause });
     else kept.push(one);
   }
-  const late = kept.filter((one) => one.kind === 'late');
+  // Lateness that another cause explains makes a hold short all the same.
+  const late = candidates.filter((one) => one.kind === 'late');
   const control = kept.filter((one) => one.channelId === bench.input.controlChannelId && one.kind !== 'late');
   kept.push(...holdLengths(bench, late, takenByFindings(bench, control)).filter((hold) => !isLates(bench, hold, late)));
   kept.sort((a, b) => a.startS - b.startS || rank(a.kind) - rank(b.kind));

@@ -107,8 +107,8 @@ export function powerCuts(bench: Bench, power: Grid | null, others: readonly Can
   );
   const found: Candidate[] = [];
   for (const part of parts) {
-    const start = topNear(smooth, part.from, half, from);
-    const turn = turnAfter(smooth, part.from, Math.max(1.5, 4 * bench.smoothSigmaC));
+    const start = onset(smooth, part.from, half, from, Math.max(1, 3 * bench.smoothSigmaC));
+    const turn = lowestOf(smooth, part.from, part.to + 2 * half);
     const span: Span = { startS: timeAt(smooth, start), endS: timeAt(smooth, turn) };
     if (others.some((o) => span.startS < o.reachS && o.startS < span.endS)) continue;
     if (found.some((f) => span.startS < f.endS)) continue;
@@ -121,14 +121,14 @@ export function powerCuts(bench: Bench, power: Grid | null, others: readonly Can
 function cutFrom(bench: Bench, power: Grid | null, start: number, turn: number): Candidate | null {
   const { smooth, limits } = bench;
   const startS = timeAt(smooth, start);
-  const endS = timeAt(smooth, turn);
+  const openEnded = bench.runEndS === bench.logEndS && !risesAgain(smooth, turn);
+  const endS = openEnded ? bench.logEndS : timeAt(smooth, turn);
   const dropC = smooth.value[start]! - smooth.value[turn]!;
   const shouldC = Math.min(bench.setpoint[start]!, smooth.value[start]!);
   const lostC = shouldC - smooth.value[turn]!;
   if (endS - startS < limits.powerCutMinS || !(lostC >= limits.powerCutMinC)) return null;
-  const openEnded = bench.runEndS === bench.logEndS && bench.logEndS - endS < 2 * bench.clock.gapLimitS;
   if (!openEnded && !resumes(smooth, turn)) return null;
-  const off = power ? powerIsOff(power, startS, endS) : null;
+  const off = power ? powerIsOff(power, startS, endS, bench.clock.intervalS) : null;
   if (off === false) return null;
   if (off === null && !fallsByItself(bench, startS, Math.min(endS, startS + JUDGED_S))) return null;
   const segment = segmentAt(bench.fired, startS);
@@ -161,13 +161,30 @@ function heats(bench: Bench, atS: number): boolean {
   return one.leg.direction >= 0 || (one.arrivedS !== null && atS > one.arrivedS + PLANNED_FALL_S);
 }
 
-/** Highest node within a window about the beginning of a fall. */
-function topNear(grid: Grid, at: number, half: number, from: number): number {
-  let best = at;
-  for (let i = Math.max(from, at - 2 * half); i <= Math.min(lastIndex(grid), at + half); i++) {
-    if (grid.value[i]! > grid.value[best]!) best = i;
+/** Last node before a fall that still stands at the level from which it fell. */
+function onset(grid: Grid, at: number, half: number, from: number, withinC: number): number {
+  const first = Math.max(from, at - 2 * half);
+  let top = at;
+  for (let i = first; i <= Math.min(lastIndex(grid), at + half); i++) if (grid.value[i]! > grid.value[top]!) top = i;
+  let last = top;
+  for (let i = top; i <= at + half; i++) if (grid.value[i]! > grid.value[top]! - withinC) last = i;
+  return last;
+}
+
+function lowestOf(grid: Grid, from: number, to: number): number {
+  let lowest = from;
+  for (let i = from; i <= Math.min(lastIndex(grid), to); i++) if (grid.value[i]! < grid.value[lowest]!) lowest = i;
+  return lowest;
+}
+
+/** Whether a curve ever rises again, clear of noise, to the end of the log. */
+function risesAgain(grid: Grid, from: number): boolean {
+  let lowestC = Infinity;
+  for (let i = from; i <= lastIndex(grid); i++) {
+    lowestC = Math.min(lowestC, grid.value[i]!);
+    if (grid.value[i]! - lowestC > 2 * RESUMES_C) return true;
   }
-  return best;
+  return false;
 }
 
 function resumes(grid: Grid, turn: number): boolean {
@@ -177,9 +194,11 @@ function resumes(grid: Grid, turn: number): boolean {
 }
 
 /** Whether the output lay at zero through a fall; null if the channel says nothing there. */
-function powerIsOff(power: Grid, startS: number, endS: number): boolean | null {
-  const from = indexAt(power, startS + Math.min(60, (endS - startS) / 4));
-  const to = indexAt(power, endS - Math.min(60, (endS - startS) / 4));
+function powerIsOff(power: Grid, startS: number, endS: number, intervalS: number): boolean | null {
+  // The edges of the fall are known to no better than a sample and a sheath's lag.
+  const edgeS = Math.min(60 + 2 * intervalS, (endS - startS) / 3);
+  const from = indexAt(power, startS + edgeS);
+  const to = indexAt(power, endS - edgeS);
   let high = 0;
   for (let i = 0; i <= lastIndex(power); i++) if (power.known[i] && power.value[i]! > high) high = power.value[i]!;
   let off = 0;
