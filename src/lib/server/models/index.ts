@@ -20,6 +20,12 @@ import { initUser } from './user';
 
 /** Declares every model on a connection. One line a model, in the order of the migrations. */
 export function initModels(sequelize: Sequelize): void {
+  // Sequelize writes the column's name into the description it is given: a description that two columns share would
+  // give both the same name. Each column gets a copy.
+  sequelize.addHook('beforeDefine', (attributes) => {
+    for (const [name, description] of Object.entries(attributes))
+      if (typeof description === 'object' && 'type' in description) attributes[name] = { ...description };
+  });
   initStudio(sequelize);
   initUser(sequelize);
   initCredential(sequelize);
