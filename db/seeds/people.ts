@@ -3,7 +3,8 @@ import type { Client } from 'pg';
 import { PASSWORD_COST } from '../../src/lib/server/auth/password';
 import accounts from './demo-accounts.json' with { type: 'json' };
 
-export type DemoKey = 'owner' | 'tech' | 'teacher' | 'student' | 'otherOwner' | 'otherTech';
+export type DemoKey =
+  'owner' | 'tech' | 'teacher' | 'student' | 'studentTwo' | 'studentThree' | 'otherOwner' | 'otherTech';
 
 export const demoAccounts = accounts;
 

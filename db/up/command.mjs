@@ -7,11 +7,24 @@ export function capture(command, args, options = {}) {
   return { code: result.status ?? 1, out: `${result.stdout ?? ''}${result.stderr ?? ''}` };
 }
 
-/** Runs a command on this terminal; resolves to its exit code. */
+const running = new Set();
+
+/** Runs a command on this terminal; resolves to its exit code. The kernel ends it with this process, however that ends. */
 export function show(command, args, options = {}) {
   return new Promise((resolve) => {
-    const child = spawn(command, args, { stdio: 'inherit', ...options });
-    child.once('error', () => resolve(127));
-    child.once('exit', (code, signal) => resolve(code ?? (signal ? 1 : 0)));
+    const tied = ['--pdeathsig', 'TERM', '--', command, ...args];
+    const child = spawn('setpriv', tied, { stdio: 'inherit', ...options });
+    running.add(child);
+    const done = (code) => {
+      running.delete(child);
+      resolve(code);
+    };
+    child.once('error', () => done(127));
+    child.once('exit', (code, signal) => done(code ?? (signal ? 1 : 0)));
   });
+}
+
+/** Ends what `show` still runs. */
+export function endRunning() {
+  for (const child of running) child.kill('SIGTERM');
 }
