@@ -2,7 +2,7 @@ import type { Bench } from './bench';
 import { lastIndex, smoothed, timeAt, type Grid } from './grid';
 import { shifted, type Measured } from './measured';
 import type { Noise } from './noise';
-import type { Leg } from './plan';
+import { plannedCurve, readerOf, type Leg } from './plan';
 import { centredSlopes, regressionOf } from './regress';
 import { firedLegs } from './segments';
 import type { Thresholds } from './thresholds';
@@ -31,6 +31,23 @@ export function slopeWindowS(noise: Noise, intervalS: number, limits: Thresholds
   return ratio <= 1 ? limits.regressionS : Math.min(SLOPE_MOST_S, limits.regressionS * ratio ** (2 / 3));
 }
 
+/** A log that begins after the run did: what it does not show is taken to have gone by the plan, and marked unknown. */
+function fromTheStart(grid: Grid, legs: readonly Leg[]): Grid {
+  const missing = Math.ceil(grid.originS / grid.stepS);
+  if (missing <= 0) return grid;
+  const originS = grid.originS - missing * grid.stepS;
+  const value = new Float64Array(missing + grid.value.length);
+  const known = new Uint8Array(value.length);
+  value.set(grid.value, missing);
+  known.set(grid.known, missing);
+  const read = readerOf(plannedCurve(legs));
+  for (let i = 0; i < missing; i++) {
+    const planC = read(Math.max(0, originS + i * grid.stepS));
+    value[i] = planC === planC ? planC : grid.value[0]!;
+  }
+  return { ...grid, originS, value, known };
+}
+
 /** Lays the log under the plan and works out what was fired. */
 export function benchOf(
   input: ReviewInput,
@@ -40,7 +57,7 @@ export function benchOf(
   legs: readonly Leg[],
   startOffsetS: number,
 ): Bench {
-  const grid = shifted(logGrid, startOffsetS);
+  const grid = fromTheStart(shifted(logGrid, startOffsetS), legs);
   const { noise } = log.control;
   const windowS = levelWindowS(noise, log.clock.intervalS);
   const smooth = smoothed(grid, windowS);

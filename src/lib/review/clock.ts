@@ -83,15 +83,30 @@ function leapOf(
   const errorC = Math.max(0.5, (4 * noise.sigmaC) / Math.sqrt(Math.min(before.count, then.count)));
   const changedC = (then.levelC - before.levelC) * Math.sign(before.slopeCPerS);
   if (expectedC < 5 * errorC || changedC < -errorC || changedC >= limits.leapShare * expectedC) return 0;
-  const atHold = profile.segments.some(
-    (s) => s.holdS >= limits.gapMinS && Math.abs(before.levelC - s.toC) <= 1.5 * bandOfC(limits, s.stage),
-  );
-  if (atHold) return 0;
+  if (passesHold(profile, before.levelC, then.levelC, Math.sign(before.slopeCPerS), errorC, limits)) return 0;
   const meanCPerS = (before.slopeCPerS + then.slopeCPerS) / 2;
   const passedS = Math.max(intervalS, Math.abs(changedC / meanCPerS));
   // A clock that was set forward loses no row: what is left is one interval, unless the curve clearly says more.
   const lostRows = Math.abs(changedC) > errorC + 3 * intervalS * Math.abs(meanCPerS);
   return silentS - (lostRows ? passedS : intervalS);
+}
+
+/** Whether a planned hold lies between the temperatures on both sides of a silence, so that it may have passed unseen. */
+function passesHold(
+  profile: Profile,
+  beforeC: number,
+  afterC: number,
+  direction: number,
+  errorC: number,
+  limits: Thresholds,
+): boolean {
+  return profile.segments.some((segment, k) => {
+    const fromC = k ? (profile.segments[k - 1]?.toC ?? profile.startC) : profile.startC;
+    const sameWay = Math.sign(segment.toC - fromC) === direction;
+    const near = Math.abs(beforeC - segment.toC) <= 1.5 * bandOfC(limits, segment.stage);
+    const within = direction * (beforeC - segment.toC) <= errorC && direction * (afterC - segment.toC) >= -errorC;
+    return segment.holdS >= limits.gapMinS && sameWay && near && within;
+  });
 }
 
 /** Line through the samples beside a silence, and its level at the sample next to it. */

@@ -68,7 +68,7 @@ export function figuresOf(
   power: Grid | null,
 ): ReviewFigures {
   const { grid, smooth } = bench;
-  const from = indexAt(grid, 0);
+  const from = indexAt(grid, Math.max(0, -bench.startOffsetS));
   const to = indexAt(grid, bench.runEndS);
   let peakAt = -1;
   for (let i = from; i <= to; i++) {

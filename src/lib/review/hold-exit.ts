@@ -38,7 +38,7 @@ export function holdExit(
     let j = i;
     while (j <= last && away(j) > 0.8 * leg.bandC && away(j) < thereC) j++;
     const gone = j > last || away(j) >= thereC;
-    const leftS = departure(grid, regression, leg, direction, i, arrivedS);
+    const leftS = departure(grid, regression, leg, direction, i, arrivedS, expectedEndS);
     const backAt = gone ? comesBack(grid, leg, direction, j, returnsLaterS) : j;
     if (backAt === null) return leftS;
     const early = !gone && isNextRamp(regression, next, i, grid) && Math.abs(leftS - expectedEndS) <= nearS(leg);
@@ -50,14 +50,33 @@ export function holdExit(
 
 const nearS = (leg: Leg) => Math.max(EXPECTED_WITHIN_S, 0.1 * leg.holdS);
 
-/** Run time at which the slope after the departure, run back, meets the target. */
-function departure(grid: Grid, regression: Regression, leg: Leg, direction: number, crossed: number, arrivedS: number): number {
+/** Run time at which the slope after the departure, run back, meets the target; in a silence, when it was expected. */
+function departure(
+  grid: Grid,
+  regression: Regression,
+  leg: Leg,
+  direction: number,
+  crossed: number,
+  arrivedS: number,
+  expectedEndS: number,
+): number {
   const crossedS = timeAt(grid, crossed);
   const ahead = Math.min(lastIndex(grid), crossed + Math.round(180 / grid.stepS));
   const slope = direction * regression.slopeCPerH(crossed - Math.round(30 / grid.stepS), ahead);
-  if (!(slope > 5)) return crossedS;
   const overC = direction * (grid.value[crossed]! - leg.toC);
-  return Math.max(arrivedS, crossedS - Math.min(1800, (overC / slope) * 3600));
+  const backS = slope > 5 ? Math.min(1800, (overC / slope) * 3600) : 0;
+  const leftS = Math.max(arrivedS, crossedS - backS);
+  const unseen = [crossed, indexAt(grid, leftS)].find((i) => grid.known[i] === 0);
+  return unseen === undefined ? leftS : withinSilence(grid, unseen, Math.max(arrivedS, expectedEndS));
+}
+
+/** The time nearest to `atS` in the stretch of unknown nodes about one of them. */
+function withinSilence(grid: Grid, node: number, atS: number): number {
+  let from = node;
+  let to = node;
+  while (from > 0 && grid.known[from - 1] === 0) from--;
+  while (to < lastIndex(grid) && grid.known[to + 1] === 0) to++;
+  return Math.max(timeAt(grid, from), Math.min(timeAt(grid, to), atS));
 }
 
 function isNextRamp(regression: Regression, next: Leg | null, crossed: number, grid: Grid): boolean {

@@ -6,8 +6,8 @@ import type { Thresholds } from './thresholds';
 
 /**
  * Which frozen stretches are a stuck sensor: the plan, or another chamber channel, moves by more than the band within the
- * stretch. Against the plan alone the reading must also leap when it is released (or never be), because a plan that runs
- * late may be moving on paper while the kiln rests in a hold.
+ * stretch, and the reading leaps when it is released (or never is). Without that leap the kiln may have rested in a hold
+ * while a late plan moved on paper only, or the other sensor drifted.
  * @param planAt the plan at seconds from the control channel's first sample
  * @param others other chamber channels on a grid whose origin is that first sample
  */
@@ -20,11 +20,11 @@ export function stuckStretches(
   return sensor.frozen.filter((part) => {
     const fromS = sensor.timeS[part.from]!;
     const toS = sensor.timeS[part.to]!;
-    if (others.some((grid) => rangeC(grid, fromS, toS) > limits.bandC)) return true;
-    const plan = sampled(planAt, fromS, toS);
+    const moved =
+      sampled(planAt, fromS, toS) > limits.bandC || others.some((grid) => rangeC(grid, fromS, toS) > limits.bandC);
     const released = readingAfter(sensor.channel.value, part);
     const leapC = Math.abs(released - sensor.channel.value[part.from]!);
-    return plan > limits.bandC && (released !== released || leapC > limits.bandC / 2);
+    return moved && (released !== released || leapC > limits.bandC / 2);
   });
 }
 
