@@ -1,4 +1,5 @@
 import { randomUUID } from 'node:crypto';
+import { vi } from 'vitest';
 import { kilnInputSchema } from '~/lib/contracts/equipment';
 import type { ProfileInput } from '~/lib/profile/schema';
 import { profileSchema } from '~/lib/profile/schema';
@@ -75,16 +76,11 @@ export const statusOf = async (work: Promise<unknown>): Promise<number> => (awai
 
 /** How many statements some work sends to the database. */
 export async function statementsOf(work: () => Promise<unknown>): Promise<number> {
-  const sequelize = database();
-  let count = 0;
-  const before = sequelize.options.logging;
-  sequelize.options.logging = () => {
-    count += 1;
-  };
+  const query = vi.spyOn(database(), 'query');
   try {
     await work();
+    return query.mock.calls.length;
   } finally {
-    sequelize.options.logging = before ?? false;
+    query.mockRestore();
   }
-  return count;
 }
