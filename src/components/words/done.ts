@@ -11,6 +11,7 @@ export const DONE = {
   started: 'The firing has started. The version and the load are now fixed.',
   finished: 'Heating is over. The kiln cools down.',
   'broken-off': 'The run was broken off.',
+  signed: 'Signed. The run is closed.',
   'handed-out': 'Handed out. Those it is for see it now.',
   withdrawn: 'Withdrawn. Those it was for see that it is.',
   acknowledged: 'Noted that you read the cautions.',

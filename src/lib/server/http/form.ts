@@ -48,7 +48,7 @@ export async function readForm(request: Request): Promise<Form> {
 }
 
 /** Parses by a schema of the contract; what does not fit is refused with the field's name. */
-export function parseForm<S extends z.ZodType>(schema: S, value: z.input<S>): z.output<S> {
+export function parseForm<S extends z.ZodType>(schema: S, value: unknown): z.output<S> {
   const result = schema.safeParse(value);
   if (result.success) return result.data;
   throw notValid('Some fields need another look.', issuesOf(result.error));

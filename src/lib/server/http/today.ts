@@ -1,0 +1,57 @@
+import type { Handout } from '~/lib/contracts/classes';
+import type { ProfileSummary } from '~/lib/contracts/profiles';
+import type { Run } from '~/lib/contracts/runs';
+import { hasRole, type Actor } from '../auth/actor';
+import { listHandouts } from '../services/handouts';
+import { listProfiles } from '../services/profiles';
+import { listRuns } from '../services/runs';
+
+const WEEK_MS = 7 * 86_400_000;
+
+/** What the first page tells a person of their studio. */
+export interface Today {
+  readonly underWay: readonly Run[];
+  readonly cooling: readonly Run[];
+  /** Planned to start within a week, or already late; the next first. */
+  readonly planned: readonly Run[];
+  /** Runs with findings that nobody has judged yet. */
+  readonly withFindings: readonly Run[];
+  /** In review, and not by this person: theirs to approve or return. */
+  readonly toReview: readonly ProfileSummary[];
+  readonly ownDrafts: readonly ProfileSummary[];
+  /** Handed to this person and not yet read. */
+  readonly toRead: readonly Handout[];
+  /** Handed to this person, read and in force. */
+  readonly toFire: readonly Handout[];
+}
+
+export async function todayOf(actor: Actor, now: Date): Promise<Today> {
+  const reviews = hasRole(actor, 'teacher', 'owner');
+  const decides = hasRole(actor, 'technician', 'teacher');
+  const [underWay, cooling, planned, recent, inReview, drafts, handouts] = await Promise.all([
+    listRuns(actor, { limit: 50, state: 'under-way' }),
+    listRuns(actor, { limit: 50, state: 'cooling-down' }),
+    listRuns(actor, { limit: 50, state: 'planned' }),
+    decides ? listRuns(actor, { limit: 100 }) : null,
+    reviews ? listProfiles(actor, { limit: 50, archived: 'no', state: 'in-review' }) : null,
+    listProfiles(actor, { limit: 50, archived: 'no', state: 'draft' }),
+    listHandouts(actor, { limit: 100 }),
+  ]);
+  const mine = handouts.items.flatMap((handout) => {
+    const own = handout.people.find((person) => person.id === actor.userId);
+    return own ? [{ handout, read: own.acknowledgedAt !== null }] : [];
+  });
+  const isOpen = ({ state }: Handout) => state === 'in-force' || state === 'ahead';
+  return {
+    underWay: underWay.items,
+    cooling: cooling.items,
+    planned: planned.items
+      .filter((run) => Date.parse(run.plannedStartAt) < now.getTime() + WEEK_MS)
+      .sort((a, b) => a.plannedStartAt.localeCompare(b.plannedStartAt)),
+    withFindings: (recent?.items ?? []).filter((run) => run.openFindings > 0 && run.state !== 'broken-off'),
+    toReview: (inReview?.items ?? []).filter((profile) => profile.latest.authorId !== actor.userId),
+    ownDrafts: drafts.items.filter((profile) => profile.latest.authorId === actor.userId),
+    toRead: mine.filter(({ handout, read }) => !read && isOpen(handout)).map(({ handout }) => handout),
+    toFire: mine.filter(({ handout, read }) => read && isOpen(handout)).map(({ handout }) => handout),
+  };
+}
