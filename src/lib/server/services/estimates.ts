@@ -2,9 +2,10 @@ import type { z } from '~/lib/zod';
 import type { Kiln } from '~/lib/contracts/equipment';
 import type { estimateRequestSchema, estimateRoutes } from '~/lib/contracts/profiles';
 import { findMaterial } from '~/lib/materials';
-import { co2Of, costOf, tariffFits, zoneOffset, type TariffPlan } from '~/lib/planning';
+import { co2Of, costOf, tariffFits, zoneOffset, type OffsetMinutesAt, type TariffPlan } from '~/lib/planning';
 import type { Profile } from '~/lib/profile/schema';
 import { issuesOf } from '~/lib/profile/validate';
+import { cautionsOf, type CautionContext } from '~/lib/thermal/cautions';
 import type { Caution, Estimate } from '~/lib/thermal/estimate-schema';
 import { estimateOf } from '~/lib/thermal/estimate';
 import type { KilnPlate } from '~/lib/thermal/kiln-schema';
@@ -15,6 +16,7 @@ import { isOnlyStudent, type Actor } from '../auth/actor';
 import type { Tx } from '../database';
 import { notFound, notValid, type Issue } from '../errors';
 import { studioRules } from '../repositories/studio-rules';
+import { thermocouples } from '../repositories/thermocouples';
 import { loadIssues } from './content-check';
 import { kilnFor, plateOf } from './kilns';
 import { tariffFor } from './tariffs';
@@ -42,40 +44,60 @@ export async function estimateFiring(
   const load = request.load ?? loadSchema.parse({});
   requireComputable(request.profile, plate, load, query);
   const plan = await planFor(actor, request, kiln, plate);
-  const { timeZone } = await studioRules(actor.studioId);
+  const startMs = request.startAt === undefined ? null : Date.parse(request.startAt);
+  const context = await contextOf(actor, kiln, startMs);
   const simulation = simulate({ profile: request.profile, kiln: plate, load, ambientC: request.ambientC });
-  const found = estimateOf(simulation, { mouldIndex: query.mould ?? null, cautions: [] });
-  const startMs = request.startAt === undefined ? now.getTime() : Date.parse(request.startAt);
-  return { ...found, ...priced(simulation, plan, startMs, timeZone, actor) };
+  const found = estimateOf(simulation, {
+    mouldIndex: query.mould ?? null,
+    cautions: cautionsOf(simulation, context),
+  });
+  return { ...found, ...priced(actor, simulation, plan, startMs ?? now.getTime(), context.offsetMinutesAt) };
 }
 
-/** Cautions of a version in a kiln, as its approval and its handouts go by them. */
-export async function cautionsOf(
+/** Cautions of a version in a kiln, whenever it is fired: what its approval and its handouts go by. */
+export async function versionCautions(
   actor: Actor,
   content: { readonly profile: Profile; readonly kilnId: string; readonly load: Load | null },
   tx: Tx,
 ): Promise<Caution[]> {
-  const plate = plateOf(await kilnFor(actor, content.kilnId, tx));
+  const kiln = await kilnFor(actor, content.kilnId, tx);
   const load = content.load ?? loadSchema.parse({});
-  const simulation = simulate({ profile: content.profile, kiln: plate, load, ambientC: ROOM_C });
-  return estimateOf(simulation, { mouldIndex: null, cautions: [] }).cautions;
+  const simulation = simulate({ profile: content.profile, kiln: plateOf(kiln), load, ambientC: ROOM_C });
+  return cautionsOf(simulation, await contextOf(actor, kiln, null, tx));
+}
+
+/** What the rules go by besides the curves: the studio's hours, zone and units, and the kiln's thermocouple. */
+async function contextOf(
+  { studioId }: Actor,
+  kiln: Kiln | null,
+  startMs: number | null,
+  tx?: Tx,
+): Promise<CautionContext> {
+  const rules = await studioRules(studioId, tx);
+  const thermocouple = kiln?.thermocoupleId
+    ? await thermocouples.find(studioId, kiln.thermocoupleId, tx)
+    : null;
+  return {
+    startMs,
+    offsetMinutesAt: zoneOffset(rules.timeZone),
+    attendedHours: { fromMinute: rules.attendedFromMinute, toMinute: rules.attendedUntilMinute },
+    thermocouple,
+    units: rules.units,
+  };
 }
 
 function priced(
+  actor: Actor,
   simulation: Simulation,
   plan: TariffPlan | null,
   startMs: number,
-  timeZone: string,
-  actor: Actor,
+  offsetMinutesAt: OffsetMinutesAt,
 ): Pick<Estimate, 'cost' | 'co2Kg'> {
   const { kiln } = simulation;
   const energy = kiln.energy === 'gas' ? kiln.fuel : 'electricity';
   const { co2Kg } = co2Of(energy, simulation.energy.inKWh, plan);
   const shown = plan !== null && !isOnlyStudent(actor);
-  return {
-    co2Kg,
-    cost: shown ? costOf(plan, simulation, startMs, zoneOffset(timeZone)).cost : null,
-  };
+  return { co2Kg, cost: shown ? costOf(plan, simulation, startMs, offsetMinutesAt).cost : null };
 }
 
 /** The tariff that the request names, else the kiln's own where it prices what the kiln burns. */

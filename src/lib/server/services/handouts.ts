@@ -22,7 +22,7 @@ import {
 } from '../repositories/handouts';
 import { isUuid } from '../repositories/row';
 import { getClass } from './classes';
-import { cautionsOf } from './estimates';
+import { versionCautions } from './estimates';
 import { kilnFor } from './kilns';
 import { requirePeople } from './people';
 import { stateInWords, versionById } from './version-access';
@@ -84,7 +84,7 @@ export async function createHandout(
     if (kiln.archivedAt !== null) throw wrongState(`${kiln.name} is archived. Choose a kiln that is in use.`);
     await requireOpenClass(actor, body.classId, tx);
     await requirePeople(actor, body.personIds, tx);
-    const cautions = await cautionsOf(actor, { ...version, kilnId: kiln.id }, tx);
+    const cautions = await versionCautions(actor, { ...version, kilnId: kiln.id }, tx);
     requireNoNewStop(version, cautions, kiln.name);
     const { classId, note, personIds, profileVersionId } = body;
     const id = randomUUID();

@@ -9,7 +9,7 @@ import { recordEvent } from '../repositories/audit';
 import { touchProfile } from '../repositories/profiles';
 import { studioRules } from '../repositories/studio-rules';
 import { insertEvent, writeState, type NewEvent, type VersionRecord } from '../repositories/versions';
-import { cautionsOf } from './estimates';
+import { versionCautions } from './estimates';
 import { heldVersion, readableVersion, stateInWords } from './version-access';
 
 type Body<R extends { body: z.ZodType }> = z.output<R['body']>;
@@ -50,7 +50,7 @@ export async function approveVersion(
     await requireOtherEyes(actor, record, 'approve', tx);
     requireState(record.version, 'in-review', 'approved');
     const kilnId = requireKiln(record.version);
-    const cautions = await cautionsOf(actor, { ...record.version, kilnId }, tx);
+    const cautions = await versionCautions(actor, { ...record.version, kilnId }, tx);
     requireReasons(cautions, body.overrides);
     return move(actor, record, 'approved', 'approved', { overrides: body.overrides }, now, tx);
   });
