@@ -94,7 +94,7 @@ describe('a profile', () => {
     const { id } = await begin();
     const { actor } = otherTech;
     const content = { profile: firing() };
-    for (const call of [
+    const calls = [
       getProfile(actor, id),
       getVersion(actor, id, 1),
       updateProfile(actor, id, 1, { name: 'Taken' }),
@@ -103,8 +103,8 @@ describe('a profile', () => {
       saveDraft(actor, id, 1, 1, content),
       submitVersion(actor, id, 1, {}),
       createProfile(actor, { name: 'With their kiln', kilnId, profile: firing() }),
-    ])
-      expect(await statusOf(call)).toBe(404);
+    ];
+    for (const status of await Promise.all(calls.map(statusOf))) expect(status).toBe(404);
     expect((await listProfiles(actor, all)).items).toEqual([]);
   });
 });

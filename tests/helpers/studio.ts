@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { vi } from 'vitest';
 import { kilnInputSchema } from '~/lib/contracts/equipment';
+import type { Version } from '~/lib/contracts/profiles';
 import type { ProfileInput } from '~/lib/profile/schema';
 import { profileSchema } from '~/lib/profile/schema';
 import { loadSchema, type LoadInput } from '~/lib/thermal/load-schema';
@@ -8,6 +9,7 @@ import type { Role } from '~/lib/contracts/common';
 import type { Actor } from '~/lib/server/auth/actor';
 import { database } from '~/lib/server/database';
 import { HoldfastError } from '~/lib/server/errors';
+import { approveVersion, createProfile, submitVersion } from '~/lib/server/services/profiles';
 import type { TestDatabase } from './database';
 
 /** A front loader that can do what {@link FIRING} asks. */
@@ -83,4 +85,21 @@ export async function statementsOf(work: () => Promise<unknown>): Promise<number
   } finally {
     query.mockRestore();
   }
+}
+
+/** An approved version of a technician's, for a kiln. */
+export async function approvedVersion(
+  people: TestDatabase['people'],
+  kilnId: string,
+  name = 'Approved shell',
+): Promise<{ profileId: string; version: Version }> {
+  const { id } = await createProfile(people.tech.actor, {
+    name,
+    kilnId,
+    profile: firing(),
+    load: load(),
+  });
+  await submitVersion(people.tech.actor, id, 1, {});
+  const version = await approveVersion(people.teacher.actor, id, 1, { overrides: [] });
+  return { profileId: id, version };
 }
