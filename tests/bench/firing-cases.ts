@@ -33,7 +33,7 @@ const day: ProfileInput = {
     { stage: 'burnout', toC: 730, rateCPerH: 120, holdS: 7200, vent: 'open' },
     { stage: 'vitrification', toC: 900, rateCPerH: 250, holdS: 3600 },
     { stage: 'casting-hold', toC: 780, rateCPerH: 'coast', holdS: 5400 },
-    { stage: 'cooling', toC: 480, rateCPerH: 80, holdS: 0 },
+    { stage: 'cooling', toC: 430, rateCPerH: 43, holdS: 0 },
   ],
 };
 
@@ -51,11 +51,11 @@ export const dayFiring: FiringInput = parsed(day);
 export const fortnightFiring: FiringInput = parsed({
   startC: 20,
   segments: [
-    { stage: 'drying', toC: 95, rateCPerH: 1.5, holdS: 2 * 24 * 3600 },
+    { stage: 'drying', toC: 95, rateCPerH: 1.8, holdS: 24 * 3600 },
     { stage: 'melt-out', toC: 260, rateCPerH: 4, holdS: 24 * 3600, drain: true },
-    { stage: 'burnout', toC: 730, rateCPerH: 8, holdS: 2 * 24 * 3600, vent: 'open' },
+    { stage: 'burnout', toC: 730, rateCPerH: 8, holdS: 24 * 3600, vent: 'open' },
     { stage: 'vitrification', toC: 900, rateCPerH: 20, holdS: 24 * 3600 },
     { stage: 'casting-hold', toC: 780, rateCPerH: 10, holdS: 12 * 3600 },
-    { stage: 'cooling', toC: 480, rateCPerH: 5, holdS: 0 },
+    { stage: 'cooling', toC: 480, rateCPerH: 6, holdS: 0 },
   ],
 });

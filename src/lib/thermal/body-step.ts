@@ -5,7 +5,7 @@ import {
   WATER_EVAPORATION_J_PER_KG,
   WATER_HEAT_CAPACITY_J_PER_KG_K,
 } from './constants';
-import { warmWithReactions } from './enthalpy-walk';
+import { reactionsRemain, warmWithReactions } from './enthalpy-walk';
 import { eliminateWet, settleDry } from './plateau';
 import { BIN_C, LAST_BIN, TABLE_FROM_C, temperatureAfter } from './property-table';
 
@@ -74,7 +74,8 @@ function addWetConductance(body: Body): void {
 }
 
 function setStores(body: Body, perS: number): void {
-  const { middleC, tempC, store, volumeM3, capacity, capacityStart, nodes, reaction, peakC } = body;
+  const { middleC, tempC, store, volumeM3, capacity, capacityStart, nodes, peakC } = body;
+  const reaction = body.reacting ? body.reaction : null;
   for (let i = body.first; i < nodes; i++) {
     const at = (middleC[i]! - TABLE_FROM_C) * PER_BIN;
     const bin = at > 0 ? (at < LAST_BIN ? at | 0 : LAST_BIN) : 0;
@@ -149,15 +150,17 @@ export function substitute(body: Body, chamberC: number, flowsW: Float64Array): 
   return outW;
 }
 
-/** Largest difference between the temperatures of the second stage and those foreseen from the last step's rates, K. */
-export function surpriseC(body: Body, stepS: number): number {
+/** As `substitute`, for the second stage: also finds how far its temperatures lie from what the last step's rates foresaw. */
+export function substituteLast(body: Body, chamberC: number, stepS: number): number {
+  const outW = substitute(body, chamberC, body.stageTwoW);
   const { stageC, tempC, rateCPerS, nodes } = body;
   let most = 0;
   for (let i = body.first; i < nodes; i++) {
     const off = Math.abs(stageC[i]! - tempC[i]! - rateCPerS[i]! * stepS);
     if (off > most) most = off;
   }
-  return most;
+  body.surpriseC = most;
+  return outW;
 }
 
 /** Takes the step: books the heat of both stages on every node and reads the new temperatures from it. */
@@ -167,7 +170,7 @@ export function commitBody(body: Body, stepS: number): void {
   const oneS = (1 - GAMMA) * stepS;
   const twoS = GAMMA * stepS;
   const perS = 1 / stepS;
-  const special = body.wet || body.reaction !== null;
+  const special = body.wet || body.reacting;
   for (let i = first; i < nodes; i++) {
     const heatJ = oneS * stageOneW[i]! + twoS * stageTwoW[i]!;
     const fromC = tempC[i]!;
@@ -185,4 +188,5 @@ export function commitBody(body: Body, stepS: number): void {
     tempC[i] = toC;
   }
   if (body.wet) settleDry(body);
+  if (body.reacting) body.reacting = reactionsRemain(body);
 }

@@ -43,6 +43,10 @@ export interface Body {
   readonly peakC: Float64Array;
   readonly latentJ: Float64Array;
   wet: boolean;
+  /** Some node has not yet been through all reactions. */
+  reacting: boolean;
+  /** Largest difference of the last second stage from what the rates foresaw, K. */
+  surpriseC: number;
 
   // Scratch of one step
   readonly middleC: Float64Array;
@@ -135,6 +139,8 @@ export function bodyOf(properties: BodyProperties): Body {
     peakC: zeros().fill(properties.startC),
     latentJ: fullLatentJ.slice(),
     wet: latentJPerM3 > 0,
+    reacting: properties.reactions.length > 0,
+    surpriseC: 0,
     middleC: zeros(),
     link: new Float64Array(nodes + 1),
     store: zeros(),

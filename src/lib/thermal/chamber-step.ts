@@ -1,5 +1,5 @@
 import type { Body } from './body';
-import { CARRY, commitBody, eliminate, GAMMA, prepareBody, substitute, surpriseC } from './body-step';
+import { CARRY, commitBody, eliminate, GAMMA, prepareBody, substitute, substituteLast } from './body-step';
 import type { Chamber } from './chamber';
 import { meanAirHeatCapacityJPerKgK } from './air';
 import { phasesChanged } from './plateau';
@@ -84,7 +84,7 @@ function prepare(chamber: Chamber, stepS: number, middleC: number): void {
 function finish(chamber: Chamber, stepS: number, middleC: number): void {
   const { trial } = chamber;
   let most = 0;
-  for (const body of chamber.bodies) most = Math.max(most, surpriseC(body, stepS));
+  for (const body of chamber.bodies) if (body.surpriseC > most) most = body.surpriseC;
   trial.surpriseC = most;
   trial.inputPerHeat = chamber.firing.inputPerHeat(middleC);
   trial.stepS = stepS;
@@ -112,7 +112,7 @@ function solveStage(
     let changed = false;
     for (const body of bodies) {
       if (!body.wet) continue;
-      settle(body, chamberC, carry);
+      settle(body, chamberC, carry, stageS);
       if (phasesChanged(body, carry, stageS, carry === 0 ? body.stageOneW : body.stageTwoW)) {
         eliminate(body, carry, stageS);
         changed = true;
@@ -121,7 +121,7 @@ function solveStage(
     if (!changed) break;
     chamberC = knownC ?? balanceC(chamber, carry, store, heatW);
   }
-  for (const body of bodies) settle(body, chamberC, carry);
+  for (const body of bodies) settle(body, chamberC, carry, stageS);
   return chamberC;
 }
 
@@ -140,9 +140,9 @@ function balanceC(chamber: Chamber, carry: number, store: number, heatW: number)
   return drive / slope;
 }
 
-function settle(body: Body, chamberC: number, carry: number): void {
+function settle(body: Body, chamberC: number, carry: number, stageS: number): void {
   if (carry === 0) body.farOneW = substitute(body, chamberC, body.stageOneW);
-  else body.farTwoW = substitute(body, chamberC, body.stageTwoW);
+  else body.farTwoW = substituteLast(body, chamberC, stageS / GAMMA);
 }
 
 /** Heat that the node loses to bodies and vent, less what is released inside it, W. */

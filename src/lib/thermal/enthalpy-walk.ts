@@ -65,3 +65,13 @@ function fall(body: Body, node: number, heatJ: number): number {
     bin--;
   }
 }
+
+/** Whether some node of a body has still to pass through one of its reactions. */
+export function reactionsRemain(body: Body): boolean {
+  let highestC = -Infinity;
+  for (const { toC } of body.properties.reactions) highestC = Math.max(highestC, toC);
+  // A window is spread over the whole of its last bin.
+  const overC = highestC + BIN_C;
+  for (let i = body.first; i < body.nodes; i++) if (body.peakC[i]! < overC) return true;
+  return false;
+}

@@ -67,8 +67,6 @@ export function estimateOf(
 }
 
 function curveOf(simulation: Simulation, mould: MouldTrace | undefined): Estimate['curve'] {
-  const list = (series: Float64Array | undefined): number[] =>
-    series === undefined ? [] : Array.from(series);
   return {
     timeS: list(simulation.timeS),
     plannedC: list(simulation.plannedC),
@@ -81,4 +79,12 @@ function curveOf(simulation: Simulation, mould: MouldTrace | undefined): Estimat
     gasGPerMin: list(mould?.gasGPerMin),
     heatWorkH: list(mould?.heatWorkH),
   };
+}
+
+/** A plain list of a series; an empty one where there is none. */
+function list(series: Float64Array | undefined): number[] {
+  if (series === undefined) return [];
+  const values = new Array<number>(series.length);
+  for (let i = 0; i < series.length; i++) values[i] = series[i]!;
+  return values;
 }

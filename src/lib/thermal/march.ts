@@ -20,7 +20,7 @@ export interface StepSettings {
   fixedS: number | null;
 }
 
-export const DEFAULT_STEPS: StepSettings = { toleranceC: 1, mostS: 600, fixedS: null };
+export const DEFAULT_STEPS: StepSettings = { toleranceC: 1.5, mostS: 600, fixedS: null };
 
 /** Whether the kiln is on its set point, or at full fire below it, or off above it. */
 export type Mode = 'follow' | 'full' | 'off';
@@ -31,6 +31,8 @@ export interface Watch {
   /** The chamber reached the segment's target, or the programmer (if it waits) took it as reached. */
   arrives(index: number, atS: number): void;
   rampEnds(index: number, atS: number): void;
+  /** A step is about to be tried: the time to set heat sources. */
+  beforeStep(stepS: number): void;
   stepTaken(index: number, atS: number, stepS: number, lagC: number | null): void;
   segmentEnds(index: number, atS: number): void;
 }
@@ -45,6 +47,8 @@ const PROBE_S = 0.25;
 const LANDED_C = 1e-3;
 const ARRIVED_C = 0.01;
 const MOST_TRIES = 60;
+/** Longest step of the cooling after the end, of which only the opening is asked, s. */
+const COOLING_MOST_S = 3600;
 
 /** The march of one firing: chamber, programmer and clock. */
 export class March {
@@ -60,6 +64,7 @@ export class March {
   #nextS = 1;
   #fresh = true;
   #endHeatW = 0;
+  #mostS: number;
 
   constructor(
     chamber: Chamber,
@@ -73,6 +78,7 @@ export class March {
     this.offsetC = offsetC;
     this.watch = watch;
     this.settings = settings;
+    this.#mostS = settings.mostS;
   }
 
   /** Runs the programme to its end. */
@@ -95,13 +101,14 @@ export class March {
   coolTo(tempC: number, withinS: number): number | null {
     const endS = this.atS + withinS;
     this.#beginPhase('off', 0);
+    this.#mostS = COOLING_MOST_S;
     while (this.chamber.tempC > tempC && this.atS < endS) {
       const beforeC = this.chamber.tempC;
       const beforeS = this.atS;
       this.#takeUnwatched();
       const { tempC: nowC } = this.chamber;
       if (nowC <= tempC) return beforeS + ((this.atS - beforeS) * (beforeC - tempC)) / (beforeC - nowC);
-      if (nowC >= beforeC - 1e-9 && this.#nextS >= this.settings.mostS) return null;
+      if (nowC >= beforeC - 1e-9 && this.#nextS >= this.#mostS) return null;
     }
     return this.chamber.tempC <= tempC ? this.atS : null;
   }
@@ -151,10 +158,11 @@ export class March {
   /** A corner: rates change at once, so the first steps are short. */
   #beginPhase(mode: Mode, rateCPerS: number | null): void {
     const { toleranceC, mostS } = this.settings;
+    this.#mostS = mostS;
     const change = rateCPerS === null ? 0.25 : Math.abs(rateCPerS - this.chamber.rateCPerS);
     this.mode = mode;
     this.#fresh = true;
-    this.#nextS = Math.min(mostS, 30, Math.max(1, (0.5 * toleranceC) / Math.max(change, 1e-6)));
+    this.#nextS = Math.min(30, Math.max(1, (0.5 * toleranceC) / Math.max(change, 1e-6)));
   }
 
   /** One step of the firing: tried, cut short where something happens within it, and taken. */
@@ -184,6 +192,7 @@ export class March {
 
   #try(stepS: number): void {
     const { programmer, chamber, mode } = this;
+    this.watch.beforeStep(stepS);
     if (mode === 'follow') {
       tryHeld(chamber, stepS, setPointC(programmer, programmer.clockS + stepS) - this.offsetC);
     } else tryPowered(chamber, stepS, mode === 'full' ? 1 : 0);
@@ -282,6 +291,6 @@ export class March {
     this.#fresh = false;
     this.#endHeatW = endHeatW;
     const growth = 0.9 * Math.sqrt(settings.toleranceC / Math.max(surpriseC, 1e-9));
-    this.#nextS = Math.min(settings.mostS, stepS * Math.min(2, Math.max(0.3, growth)));
+    this.#nextS = Math.min(this.#mostS, stepS * Math.min(2, Math.max(0.3, growth)));
   }
 }

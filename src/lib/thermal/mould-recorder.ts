@@ -2,7 +2,7 @@ import type { Body } from './body';
 import { WATER_EVAPORATION_J_PER_KG } from './constants';
 import { GrowingSeries } from './growing-series';
 import { heatWorkOfStepH } from './heat-work';
-import { burnOut, patternLeftShare, type PatternState, patternState } from './pattern-burnout';
+import { patternLeftShare, type PatternState } from './pattern-burnout';
 import type { MouldModel } from './resolve';
 import type { MouldTrace } from './simulation';
 
@@ -20,9 +20,10 @@ export class MouldRecorder {
   readonly #heatWorkH = new GrowingSeries();
   #heatWorkSumH = 0;
 
-  constructor(model: MouldModel) {
+  /** @param pattern its pattern as `PatternFire` burns it; null: none */
+  constructor(model: MouldModel, pattern: PatternState | null) {
     this.model = model;
-    this.#pattern = model.pattern === null ? null : patternState(model.pattern);
+    this.#pattern = pattern;
     this.#record(0, 0);
   }
 
@@ -30,18 +31,17 @@ export class MouldRecorder {
   #lastCoreC = 0;
 
   /**
-   * Takes the pattern and heat work through a step that the body has just taken, and records the moment.
+   * Records the moment after a step that the body has just taken.
    *
-   * @returns gas given off by one mould, kg
+   * @param gasKg what the pattern of one mould gave off in it
    */
-  step(stepS: number, draining: boolean, airShare: number): number {
+  step(stepS: number, gasKg: number): void {
     const { body, heatWork } = this.model;
-    const fromC = this.#lastCoreC;
-    const toC = body.tempC[body.nodes - 1] ?? 0;
-    const gasKg = this.#pattern === null ? 0 : burnOut(this.#pattern, fromC, toC, stepS, draining, airShare);
-    if (heatWork !== null) this.#heatWorkSumH += heatWorkOfStepH(heatWork, fromC, toC, stepS);
+    if (heatWork !== null) {
+      const toC = body.tempC[body.nodes - 1] ?? 0;
+      this.#heatWorkSumH += heatWorkOfStepH(heatWork, this.#lastCoreC, toC, stepS);
+    }
     this.#record((gasKg * 1000 * 60) / stepS, fastestCPerH(body));
-    return gasKg;
   }
 
   #record(gasGPerMin: number, maxRateCPerH: number): void {

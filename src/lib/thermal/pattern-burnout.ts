@@ -31,11 +31,21 @@ export interface PatternState {
   undrainedShare: number;
   /** Share of each step's own mass that is still there. */
   readonly stepLeft: Float64Array;
+  /** The same at the end of the step last looked at. */
+  nextUndrainedShare: number;
+  readonly nextStepLeft: Float64Array;
 }
 
 /** A whole pattern. */
 export function patternState(properties: PatternProperties): PatternState {
-  return { properties, undrainedShare: 1, stepLeft: new Float64Array(properties.steps.length).fill(1) };
+  const steps = properties.steps.length;
+  return {
+    properties,
+    undrainedShare: 1,
+    stepLeft: new Float64Array(steps).fill(1),
+    nextUndrainedShare: 1,
+    nextStepLeft: new Float64Array(steps).fill(1),
+  };
 }
 
 /** Share of the organic mass that is still there, 0-1. */
@@ -51,11 +61,15 @@ export function patternLeftShare(state: PatternState): number {
 
 const COLDEST_DECAY_C = 120;
 
+function pace(perK: number, tempC: number): number {
+  return Math.exp(-perK / (tempC + KELVIN_AT_0_C));
+}
+
 /** ∫ A·exp(−E/RT) dt over a step in which temperature goes straight from one value to another: Simpson's rule. */
 function progressOf(step: DecayStep, fromC: number, toC: number, stepS: number): number {
   const perK = step.activationJPerMol / GAS_CONSTANT_J_PER_MOL_K;
-  const pace = (tempC: number): number => Math.exp(-perK / (tempC + KELVIN_AT_0_C));
-  return ((pace(fromC) + 4 * pace((fromC + toC) / 2) + pace(toC)) / 6) * step.preExponentialPerS * stepS;
+  const sum = pace(perK, fromC) + 4 * pace(perK, (fromC + toC) / 2) + pace(perK, toC);
+  return (sum / 6) * step.preExponentialPerS * stepS;
 }
 
 /** Share of a step's mass left after progress ∫k dt: exact for f = 1 − α, and for f = 2(√α − α), where √α relaxes to 1. */
@@ -67,15 +81,15 @@ function leftAfter(step: DecayStep, left: number, progress: number): number {
 }
 
 /**
- * Takes a pattern through one step of time at the mould's core temperature. Draining: above its flow temperature, while
- * the segment drains, its drainable share runs out evenly over the drain time. Decay: Arrhenius steps in parallel; one
- * that follows another has only what that one has left behind to burn, and one that needs air goes at the share of its
- * pace that the air allows.
+ * Looks one step of time ahead at the mould's core temperature, without taking it (`settlePattern` does). Draining: above its
+ * flow temperature, while the segment drains, its drainable share runs out evenly over the drain time. Decay: Arrhenius
+ * steps in parallel; one that follows another has only what that one has left behind to burn, and one that needs air goes
+ * at the share of its pace that the air allows.
  *
- * @param airShare share of the air needed that got in over the last step, 0-1
+ * @param airShare share of the air needed that gets in, 0-1
  * @returns gas given off, kg
  */
-export function burnOut(
+export function foreseePattern(
   state: PatternState,
   fromC: number,
   toC: number,
@@ -83,24 +97,36 @@ export function burnOut(
   draining: boolean,
   airShare: number,
 ): number {
-  const { properties, stepLeft } = state;
-  const { flowsC, drainedShare, drainTimeS, massKg, ashShare } = properties;
-  if (draining && flowsC !== null && Math.max(fromC, toC) >= flowsC) {
-    const rateShare = drainTimeS > 0 ? (drainedShare * stepS) / drainTimeS : drainedShare;
-    state.undrainedShare = Math.max(1 - drainedShare, state.undrainedShare - rateShare);
+  const { properties, stepLeft, nextStepLeft } = state;
+  const { flowsC, drainedShare, drainTimeS, massKg, ashShare, steps } = properties;
+  const hottestC = Math.max(fromC, toC);
+  state.nextUndrainedShare = state.undrainedShare;
+  nextStepLeft.set(stepLeft);
+  if (draining && flowsC !== null && hottestC >= flowsC) {
+    const drained = drainTimeS > 0 ? (drainedShare * stepS) / drainTimeS : drainedShare;
+    state.nextUndrainedShare = Math.max(
+      Math.min(state.undrainedShare, 1 - drainedShare),
+      state.undrainedShare - drained,
+    );
   }
-  if (Math.max(fromC, toC) < COLDEST_DECAY_C) return 0;
+  if (hottestC < COLDEST_DECAY_C) return 0;
   let goneShare = 0;
-  properties.steps.forEach((step, i) => {
-    const left = stepLeft[i] ?? 0;
-    if (left < 1e-9) return;
+  for (let i = 0; i < steps.length; i++) {
+    const step = steps[i]!;
+    const left = stepLeft[i]!;
+    if (left < 1e-9) continue;
     const progress = progressOf(step, fromC, toC, stepS) * (step.needsAir ? airShare : 1);
-    const unready = step.follows === null ? 0 : (stepLeft[step.follows] ?? 0);
-    const ready = Math.max(0, left - unready);
+    const ready = step.follows === null ? left : Math.max(0, left - stepLeft[step.follows]!);
     const next =
       step.follows === null ? leftAfter(step, left, progress) : left - ready * (1 - Math.exp(-progress));
     goneShare += step.massShare * (left - next);
-    stepLeft[i] = next;
-  });
-  return goneShare * state.undrainedShare * (1 - ashShare) * massKg;
+    nextStepLeft[i] = next;
+  }
+  return goneShare * ((state.undrainedShare + state.nextUndrainedShare) / 2) * (1 - ashShare) * massKg;
+}
+
+/** Takes the step that was last looked at. */
+export function settlePattern(state: PatternState): void {
+  state.undrainedShare = state.nextUndrainedShare;
+  state.stepLeft.set(state.nextStepLeft);
 }

@@ -1,52 +1,95 @@
-import type { FiringModel } from './resolve';
+import type { Body } from './body';
+import { foreseePattern, type PatternState, patternState, settlePattern } from './pattern-burnout';
+import type { FiringModel, MouldModel } from './resolve';
 
-/** Time over which heat still owed by the burning pattern is given to the chamber, s. */
+/** Time over which heat that was foreseen wrongly is made up, s. */
 const CATCH_UP_S = 300;
 
+interface BurningMould {
+  readonly count: number;
+  readonly body: Body;
+  readonly state: PatternState;
+  /** Gas of the step last looked at, kg for one mould. */
+  gasKg: number;
+}
+
 /**
- * The burning of the patterns' gas inside the chamber. Gas burns as far as there is air for it; what there is comes in
- * by leaks, the vent and the burner's excess. Heat of a step warms the chamber over the next one, and what was over- or underpaid is made up.
+ * The burning of the patterns' gas inside the chamber. Gas burns as far as there is air for it, and that comes in by leaks,
+ * the vent and the burner's excess. The heat of a step is foreseen from the rates of the one before; once
+ * the step is taken it is worked out from what the cores really did, and the difference is made up over the next minutes.
  */
 export class PatternFire {
   readonly #model: FiringModel;
+  readonly #moulds: (BurningMould | null)[];
+  #draining = false;
   #airShare = 1;
   #owedJ = 0;
   #lastInputJ = 0;
+  #burnerAirKgPerS = 0;
+  readonly #burning: boolean;
 
   constructor(model: FiringModel) {
     this.#model = model;
-    this.setVent(false);
+    this.#moulds = model.moulds.map(({ count, body, pattern }: MouldModel) =>
+      pattern === null ? null : { count, body, state: patternState(pattern), gasKg: 0 },
+    );
+    this.#burning = this.#moulds.some((mould) => mould !== null);
+    this.beginSegment(false, false);
   }
 
-  setVent(open: boolean): void {
+  patternOf(mould: number): PatternState | null {
+    return this.#moulds[mould]?.state ?? null;
+  }
+
+  /** Gas that one mould gave off over the step last taken, kg. */
+  gasKgOf(mould: number): number {
+    return this.#moulds[mould]?.gasKg ?? 0;
+  }
+
+  beginSegment(ventOpen: boolean, draining: boolean): void {
     const { kiln, chamber } = this.#model;
-    chamber.airKgPerS = open ? kiln.ventKgPerS : kiln.leakKgPerS;
+    chamber.airKgPerS = ventOpen ? kiln.ventKgPerS : kiln.leakKgPerS;
+    this.#draining = draining;
   }
 
-  /**
-   * Burns what the step gave off and sets the heat source of the next.
-   *
-   * @param gasOf takes the pattern of a mould through the step and gives its gas, kg
-   */
-  afterStep(stepS: number, gasOf: (mould: number, airShare: number) => number): void {
-    const { chamber, kiln, moulds } = this.#model;
-    this.#owedJ -= chamber.sourceW * stepS;
+  /** Sets the heat source for a step that is about to be tried. */
+  beforeStep(stepS: number): void {
+    if (!this.#burning) return;
+    const heatJ = this.#lookAhead(stepS, true);
+    const { chamber } = this.#model;
+    const sourceW = Math.max(0, heatJ / stepS + this.#owedJ / Math.max(CATCH_UP_S, stepS));
+    chamber.sourceW = sourceW > 1e-3 ? sourceW : 0;
+  }
+
+  /** Takes the patterns through the step that the bodies have just taken. */
+  afterStep(stepS: number): void {
+    if (!this.#burning) return;
+    const { chamber, kiln } = this.#model;
+    const heatJ = this.#lookAhead(stepS, false);
+    this.#owedJ += heatJ - chamber.sourceW * stepS;
+    for (const mould of this.#moulds) if (mould !== null) settlePattern(mould.state);
+    const { inputJ } = chamber.booked;
+    this.#burnerAirKgPerS = ((inputJ - this.#lastInputJ) / stepS) * kiln.excessAirKgPerJ;
+    this.#lastInputJ = inputJ;
+  }
+
+  /** Heat burnt over a step, J: ahead of it from the cores' last rates, after it from where they came from. */
+  #lookAhead(stepS: number, ahead: boolean): number {
     let heatJ = 0;
     let neededKg = 0;
-    for (let i = 0; i < moulds.length; i++) {
-      const mould = moulds[i];
-      const gasKg = gasOf(i, this.#airShare);
-      if (!mould?.pattern || gasKg === 0) continue;
-      heatJ += gasKg * mould.count * mould.pattern.heatOfCombustionJPerKg;
-      neededKg += gasKg * mould.count * mould.pattern.airKgPerKg;
+    for (const mould of this.#moulds) {
+      if (mould === null) continue;
+      const { body, state, count } = mould;
+      const nowC = body.tempC[body.nodes - 1]!;
+      const changeC = body.rateCPerS[body.nodes - 1]! * stepS;
+      const fromC = ahead ? nowC : nowC - changeC;
+      mould.gasKg = foreseePattern(state, fromC, fromC + changeC, stepS, this.#draining, this.#airShare);
+      heatJ += mould.gasKg * count * state.properties.heatOfCombustionJPerKg;
+      neededKg += mould.gasKg * count * state.properties.airKgPerKg;
     }
-    const burnerKg = (chamber.booked.inputJ - this.#lastInputJ) * kiln.excessAirKgPerJ;
-    this.#lastInputJ = chamber.booked.inputJ;
-    const airKg = chamber.airKgPerS * stepS + burnerKg;
-    this.#airShare = neededKg > airKg ? airKg / neededKg : 1;
-    const burntJ = heatJ * this.#airShare;
-    this.#owedJ += burntJ;
-    const sourceW = Math.max(0, burntJ / stepS + (this.#owedJ - burntJ) / CATCH_UP_S);
-    chamber.sourceW = sourceW > 1e-3 ? sourceW : 0;
+    const airKg = (this.#model.chamber.airKgPerS + this.#burnerAirKgPerS) * stepS;
+    const share = neededKg > airKg ? airKg / neededKg : 1;
+    if (!ahead) this.#airShare = share;
+    return heatJ * share;
   }
 }

@@ -39,7 +39,6 @@ class FiringRecorder implements Watch {
   readonly segmentIndex = new GrowingSeries();
   readonly #fire: PatternFire;
   readonly #kiln: KilnPlate;
-  #draining = false;
   #readingC: number;
   #lastC: number;
   #lastInputJ = 0;
@@ -49,15 +48,14 @@ class FiringRecorder implements Watch {
     this.model = model;
     this.#kiln = kiln;
     this.#fire = new PatternFire(model);
-    this.moulds = model.moulds.map((mould) => new MouldRecorder(mould));
+    this.moulds = model.moulds.map((mould, i) => new MouldRecorder(mould, this.#fire.patternOf(i)));
     this.#lastC = model.chamber.tempC;
     this.#readingC = this.#lastC + kiln.thermocoupleOffsetC;
     this.#record(0, 0, 0, 0);
   }
 
   segmentBegins(index: number, segment: Segment, atS: number): void {
-    this.#draining = segment.drain;
-    this.#fire.setVent(segment.vent === 'open');
+    this.#fire.beginSegment(segment.vent === 'open', segment.drain);
     this.#segmentInputJ = this.model.chamber.booked.inputJ;
     this.segments[index] = {
       plannedStartS: 0,
@@ -93,6 +91,10 @@ class FiringRecorder implements Watch {
     moments.energyKWh = (this.model.chamber.booked.inputJ - this.#segmentInputJ) / J_PER_KWH;
   }
 
+  beforeStep(stepS: number): void {
+    this.#fire.beforeStep(stepS);
+  }
+
   stepTaken(index: number, atS: number, stepS: number, lagC: number | null): void {
     const moments = this.segments[index];
     if (moments && lagC !== null) {
@@ -100,9 +102,8 @@ class FiringRecorder implements Watch {
       moments.kilnLimited = moments.largestLagC > FOLLOWS_WITHIN_C;
     }
     const heatKW = this.model.chamber.sourceW / 1000;
-    this.#fire.afterStep(stepS, (mould, airShare) =>
-      (this.moulds[mould] as MouldRecorder).step(stepS, this.#draining, airShare),
-    );
+    this.#fire.afterStep(stepS);
+    for (let i = 0; i < this.moulds.length; i++) this.moulds[i]?.step(stepS, this.#fire.gasKgOf(i));
     this.#record(atS, stepS, index, heatKW);
   }
 
