@@ -1,0 +1,17 @@
+import { ServerData } from '~/lib/client/query';
+import { UnitsProvider } from '~/lib/client/units';
+import { EditorPage } from './EditorPage';
+import './editor.css';
+import { profileEditorPropsSchema, type ProfileEditorInput } from './props';
+
+/** The profile editor as an island. Its props come from the page and are parsed here. */
+export default function ProfileEditor(input: ProfileEditorInput) {
+  const props = profileEditorPropsSchema.parse(input);
+  return (
+    <ServerData>
+      <UnitsProvider units={props.me.preferences.units ?? props.me.studio.units}>
+        <EditorPage {...props} />
+      </UnitsProvider>
+    </ServerData>
+  );
+}
