@@ -9,11 +9,13 @@ const found = (story: SimulationStory, code: string, context: CautionContext = n
 
 describe('a kiln that cannot follow', () => {
   const profile = aProfile({ toC: 400, rateCPerH: 190 }, { toC: 1000, rateCPerH: 300, holdS: 3600 });
-  const lagging = (largestLagC: number, lateS: number) =>
+  // The second ramp begins at 2 h and is planned to end at 4 h.
+  const lagging = (lagC: number, lateS: number) =>
     found(
       {
         profile,
-        moments: { 1: { kilnLimited: true, largestLagC, rampEndS: 14400 + lateS } },
+        chamberC: (atS) => (atS <= 7200 ? 20 + (190 * atS) / 3600 : 400 + (atS - 7200) / 12 - lagC),
+        moments: { 1: { kilnLimited: true, largestLagC: lagC, rampEndS: 14400 + lateS, endS: 14400 } },
       },
       'kiln-cannot-follow',
     );
@@ -28,6 +30,10 @@ describe('a kiln that cannot follow', () => {
     expect(lagging(10, 600)).toEqual([]);
     expect(lagging(10.5, 0)).toHaveLength(1);
     expect(lagging(5, 800)).toHaveLength(1);
+  });
+
+  it('is not one that the pattern heats beyond what is asked', () => {
+    expect(lagging(-83, 0)).toEqual([]);
   });
 
   it('never gets there, and stops the approval', () => {
@@ -50,6 +56,32 @@ describe('a kiln that cannot follow', () => {
     expect(
       found({ profile: fast, moments: { 0: { kilnLimited: true, largestLagC: 400 } } }, 'kiln-cannot-follow'),
     ).toEqual([]);
+  });
+});
+
+describe('a burning pattern', () => {
+  const burning = (aboveC: number, heatKW: number) => {
+    const told = toldSimulation({
+      profile: aProfile({ toC: 300, rateCPerH: 280 }, { toC: 600, rateCPerH: 150, holdS: 600 }),
+      chamberC: (atS) =>
+        atS <= 3600 ? 20 + (280 * atS) / 3600 : Math.min(600, 300 + (150 * (atS - 3600)) / 3600) + aboveC,
+    });
+    const patternHeatKW = told.patternHeatKW.fill(heatKW);
+    return cautionsOf({ ...told, patternHeatKW }, noContext).filter(
+      ({ code }) => code === 'burning-heats-kiln',
+    );
+  };
+
+  it('drives the kiln above what is asked of it', () => {
+    const [caution] = burning(83, 6.1);
+    expect(caution).toMatchObject({ severity: 'warn', segment: 1 });
+    expect(caution?.text).toMatch(/83.°C above.*6\.1.kW/);
+    expect(burning(30, 6.1)).toMatchObject([{ severity: 'note' }]);
+  });
+
+  it('is not blamed for little, nor for what it does not heat', () => {
+    expect(burning(20, 6.1)).toEqual([]);
+    expect(burning(83, 0.4)).toEqual([]);
   });
 });
 

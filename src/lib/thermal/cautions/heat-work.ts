@@ -1,7 +1,7 @@
 import type { Caution } from '../estimate-schema';
 import { devitrifiedHours } from './rates';
 import { type CautionRule, firesTheMould, firstAbove, indexOfLargest, lastHotSegment, placeAt } from './view';
-import { twoDigits } from './pattern';
+import { twoDigits } from './words';
 
 /** Below this share of the target a shell is weak for certain. */
 const FAR_SHORT_SHARE = 0.2;

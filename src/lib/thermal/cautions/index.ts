@@ -1,5 +1,6 @@
 import type { Caution } from '../estimate-schema';
 import type { Simulation } from '../simulation';
+import { burningHeatsKiln } from './burning';
 import { coreBehindAtHoldEnd } from './core';
 import { cristobalite, heatWorkShort, oversintered } from './heat-work';
 import { kilnCannotFollow, opensHot, programmerCannotHoldIt } from './kiln';
@@ -23,6 +24,7 @@ const RULES: readonly CautionRule[] = [
   patternExpandsFirst,
   noDrainStep,
   burnoutIncomplete,
+  burningHeatsKiln,
   tooSteepByRate,
   tooSteepByStress,
   inversionTooFast,

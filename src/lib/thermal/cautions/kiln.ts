@@ -1,4 +1,5 @@
 import type { Caution } from '../estimate-schema';
+import { strayingOf } from './follow';
 import { type CautionRule, segmentsOf, seriesAt } from './view';
 
 /** A kiln that is this little behind follows well enough (the band within which a run is judged). */
@@ -11,7 +12,8 @@ const MODEL = "Kiln model: the plate's power against the heat that lining, load 
 export const kilnCannotFollow: CautionRule = (view) => {
   const { simulation, words } = view;
   const cautions: Caution[] = [];
-  for (const { index, segment, fromC, moments } of segmentsOf(view)) {
+  for (const each of segmentsOf(view)) {
+    const { index, segment, fromC, moments } = each;
     const base = { code: 'kiln-cannot-follow', segment: index, atS: moments.startS, source: MODEL } as const;
     const label = `Segment ${index + 1}`;
     if (!moments.arrived && segment.toC !== fromC) {
@@ -32,12 +34,14 @@ export const kilnCannotFollow: CautionRule = (view) => {
     const plannedRampS = moments.plannedRampEndS - moments.plannedStartS;
     const lateS = moments.rampEndS - moments.startS - plannedRampS;
     const late = lateS > Math.max(LATE_S, LATE_SHARE * plannedRampS);
-    if (!moments.kilnLimited || (moments.largestLagC <= BEHIND_C && !late)) continue;
+    if (!moments.kilnLimited) continue;
+    const { behindC } = strayingOf(view, each);
+    if (behindC <= BEHIND_C && !late) continue;
     const verb = segment.toC >= fromC ? 'heat' : 'cool';
     cautions.push({
       ...base,
       severity: 'warn',
-      text: `${label} asks for ${words.rate(segment.rateCPerH)}. The kiln cannot ${verb} that fast: it comes to be ${words.difference(moments.largestLagC)} behind${late ? ` and arrives ${words.time(lateS)} late` : ''}.`,
+      text: `${label} asks for ${words.rate(segment.rateCPerH)}. The kiln cannot ${verb} that fast: it comes to be ${words.difference(behindC)} behind${late ? ` and arrives ${words.time(lateS)} late` : ''}.`,
     });
   }
   return cautions;

@@ -9,6 +9,7 @@ import {
   placeAt,
   segmentsOf,
 } from './view';
+import { inSentence, twoDigits } from './words';
 
 /** Slower than this through its melting a wax warms through and swells before its skin can run. */
 const WAX_RATE_C_PER_H = 200;
@@ -191,9 +192,3 @@ export const burnoutIncomplete: CautionRule = (view) => {
     ];
   });
 };
-
-/** Two digits and no more: the models know no better. */
-export const twoDigits = (value: number): string => String(Number(value.toPrecision(2)));
-
-/** A mould's name inside a sentence. */
-export const inSentence = (name: string): string => name.charAt(0).toLowerCase() + name.slice(1);

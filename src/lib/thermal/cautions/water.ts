@@ -7,7 +7,10 @@ import { fastestIn } from './window-rate';
 const WINDOW_S = 300;
 /** A wall that has lost this share of its water has no more to build pressure with. */
 const DRY_SHARE = 0.02;
-/** From this many times the limit on the wall is in danger at once. */
+/** An air-dried shell keeps about this much per kg and is fired hot with it (common practice); blocks are never that dry. */
+const AIR_DRY_SHARE = { shell: 0.01, flask: 0 } as const;
+/** Wetter than this and this many times faster than the limit, the wall is in danger at once. */
+const WET_SHARE = 0.05;
 const FAR_ABOVE = 3;
 const BOILS_C = 100;
 
@@ -25,6 +28,7 @@ function steamOf(
   );
   const fullKg = trace.waterKg[0] ?? 0;
   if (limit === undefined || !(fullKg > 0)) return [];
+  const dryKg = Math.max(DRY_SHARE * fullKg, AIR_DRY_SHARE[mould.form] * mould.massKg);
   const fast = fastestIn({
     timeS: simulation.timeS,
     tempC: trace.surfaceC,
@@ -33,17 +37,18 @@ function steamOf(
     toC: Infinity,
     windowS: WINDOW_S,
     maxRateCPerH: limit.maxRateCPerH,
-    counts: (at) => (trace.waterKg[at] ?? 0) > DRY_SHARE * fullKg,
+    counts: (at) => (trace.waterKg[at] ?? 0) > dryKg,
   });
   if (fast === null) return [];
   const leftKg = trace.waterKg[fast.at] ?? 0;
+  const atOnce = fast.rateCPerH > FAR_ABOVE * limit.maxRateCPerH && leftKg > WET_SHARE * mould.massKg;
   return [
     {
       code: 'steam-in-wall',
-      severity: fast.rateCPerH > FAR_ABOVE * limit.maxRateCPerH ? 'stop' : 'warn',
+      severity: atOnce ? 'stop' : 'warn',
       segment: simulation.segmentAt[fast.at] ?? null,
       atS: simulation.timeS[fast.at] ?? null,
-      text: `${name} still holds ${words.mass(leftKg)} of water while its outside is above ${words.temp(BOILS_C)} and heats at up to ${words.rate(fast.rateCPerH)}. With water in the wall ${words.rate(limit.maxRateCPerH)} is the limit${mould.count > 1 ? '; it is so with each of them' : ''}.`,
+      text: `${name} still holds ${words.mass(leftKg)} of water while its outside is above ${words.temp(BOILS_C)} and heats at up to ${words.rate(fast.rateCPerH)}. With water in the wall ${words.rate(limit.maxRateCPerH)} is the limit.`,
       source: limit.source,
     },
   ];
