@@ -103,8 +103,8 @@ export const ACCESS: readonly AccessRule[] = [
   api('/profiles/[id]/versions/[n]/retire', { POST: REVIEWERS }),
 
   // ---------------------------------------------------------------- classes and handouts
-  api('/classes', { GET: TEACHERS, POST: TEACHERS }),
-  api('/classes/[id]', { GET: TEACHERS, PATCH: TEACHERS }),
+  api('/classes', { GET: EVERY_ROLE, POST: TEACHERS }),
+  api('/classes/[id]', { GET: EVERY_ROLE, PATCH: TEACHERS }),
   api('/handouts', { GET: EVERY_ROLE, POST: TEACHERS }),
   api('/handouts/[id]', { GET: EVERY_ROLE }),
   api('/handouts/[id]/acknowledge', { POST: EVERY_ROLE }),
