@@ -1,3 +1,4 @@
+import { readFileSync } from 'node:fs';
 import { endRunning } from './command.mjs';
 import { say } from './say.mjs';
 
@@ -21,11 +22,21 @@ export function endOnSignals() {
   return { before: (step) => steps.push(step), end };
 }
 
-/** npm passes on Ctrl-C, but nothing when it is itself killed outright. */
+/** npm passes on Ctrl-C, but nothing when it is itself killed outright; between it and this process stands a shell. */
 function watchNpm(end) {
   if (!process.env.npm_lifecycle_event) return;
-  const parent = process.ppid;
+  const ancestry = () => `${process.ppid} ${parentOf(process.ppid)}`;
+  const before = ancestry();
   setInterval(() => {
-    if (process.ppid !== parent) void end(0, 'npm is gone; stopping.');
+    if (ancestry() !== before) void end(0, 'npm is gone; stopping.');
   }, 1000).unref();
+}
+
+function parentOf(pid) {
+  try {
+    // The name in brackets may hold spaces; the parent is the second field after it.
+    return readFileSync(`/proc/${pid}/stat`, 'utf8').split(') ').at(-1).split(' ')[1];
+  } catch {
+    return '';
+  }
 }
