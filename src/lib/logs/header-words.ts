@@ -17,9 +17,10 @@ export interface HeaderWords {
 }
 
 const CELSIUS =
-  /°\s*c(?![a-z])|º\s*c(?![a-z])|℃|\ufffdc(?![a-z])|\bdeg\.?[\s_]?c(?![a-z])|celsius|\bgradi c\b|\bc°/i;
-const FAHRENHEIT = /°\s*f(?![a-z])|º\s*f(?![a-z])|℉|\ufffdf(?![a-z])|\bdeg\.?[\s_]?f(?![a-z])|fahrenheit/i;
-const KELVIN = /°\s*k(?![a-z])|kelvin|\bdeg\.?[\s_]?k(?![a-z])/i;
+  /°\s*c(?![a-z])|º\s*c(?![a-z])|℃|\ufffdc(?![a-z])|(?:^|[^a-z])deg\.?[\s_]?c(?![a-z])|celsius|\bgradi c\b|\bc°/i;
+const FAHRENHEIT =
+  /°\s*f(?![a-z])|º\s*f(?![a-z])|℉|\ufffdf(?![a-z])|(?:^|[^a-z])deg\.?[\s_]?f(?![a-z])|fahrenheit/i;
+const KELVIN = /°\s*k(?![a-z])|kelvin|(?:^|[^a-z])deg\.?[\s_]?k(?![a-z])/i;
 /** A single letter as a unit: in brackets, behind a slash, or last. */
 const LETTER = /(?:[[(/]\s*([CFK])\s*[\])]?\s*$|[\s_.,-]([CFK])\s*$|^([CFK])$|[[(]([CFK])[\])])/;
 const MILLIVOLT = /(?:^|[^A-Za-z])mV(?![A-Za-z])|millivolt/;
@@ -28,7 +29,7 @@ const OTHER_UNIT =
 const PERCENT = /%|\bpct\b|_pct|percent|prozent|pour ?cent|por ?ciento/i;
 
 const TYPE =
-  /(?:type|typ|tipo|thermocouple|thermoelement|tc)[\s_-]*([BEJKNRST])(?![A-Za-z])|(?:^|[\s_(])([BEJKNRST])[\s_-]?(?:type|typ|tc)(?![a-z])/i;
+  /(?:type|typ|tipo|thermocouple|thermoelement|tc)[\s_(-]*([BEJKNRST])(?![A-Za-z])|(?:^|[\s_(])([BEJKNRST])[\s_-]?(?:type|typ|tc)(?![a-z])/i;
 
 const wordList = (...words: string[]): RegExp => new RegExp(words.join('|'), 'i');
 const JUNCTION = wordList(
@@ -62,7 +63,7 @@ const POWER = wordList(
   'brenner', 'moc\\b',
 ); // prettier-ignore
 const FOREIGN = wordList(
-  'humid', 'feucht', '\\brh\\b', 'r\\.h\\.', 'pressure', 'druck', 'pression', 'presi[oó]n', 'batter', 'akku', 'volt', 'current', 'strom',
+  'humid', 'feucht', '\\brh\\b', '\\brf\\b', 'r\\.h\\.', 'pressure', 'druck', 'pression', 'presi[oó]n', 'batter', 'akku', 'volt', 'current', 'strom',
   'curr', 'intensit', 'flow', 'durchfluss', 'd[ée]bit', 'caudal', 'oxygen', '\\bo2\\b', '\\bco2?\\b', 'weight', 'gewicht', 'poids', 'energy', 'energie',
   'status', 'alarm', 'error', 'fault', 'event', 'segment', 'step\\b', 'stage', 'phase', '\\bmode', 'signal', 'rssi', 'checksum', 'crc', 'fan\\b',
   'vent\\b', 'door', 'serial', '\\bid\\b', 'lat\\b', 'lon\\b', 'dew', 'rate\\b', 'slope',
@@ -83,7 +84,7 @@ export function headerWords(name: string): HeaderWords {
   const foreign = FOREIGN.test(text) && temperatureUnit === null;
   const otherUnit = temperatureUnit ? null : percent ? '%' : (OTHER_UNIT.exec(text)?.[1] ?? null);
   const power =
-    temperatureUnit === null && !setpoint && !/humid|feucht|\brh\b/i.test(text) &&
+    temperatureUnit === null && !setpoint && !/humid|feucht|\br[hf]\b/i.test(text) &&
     (POWER.test(text) || ['%', 'kW', 'W', 'kVA', 'VA'].includes(otherUnit ?? '')); // prettier-ignore
   return {
     temperatureUnit,
@@ -114,7 +115,7 @@ export function unitCell(cell: string): { temperature: TemperatureUnit | null; o
   return null;
 }
 const UNIT_WORD =
-  /^(?:%|% ?r\.?h\.?|pct|k?W|k?Wh|k?VA|m?A|V|s|sec(onds?)?|sek(unden)?|ms|min(ute[sn]?)?|h|hours?|stunden|d|days?|hPa|m?bar|k?Pa|Hz|rpm|ppm|m3\/h|l\/min|date|time|datum|zeit|uhrzeit|text|[dDmMyYhHsSjJaATt:./ -]{4,23}|utc|local|iso(?: ?8601)?|-|—|#|n|1|unix|epoch|bool)$/i;
+  /^(?:%|% ?r\.?h\.?|pct|k?W|k?Wh|k?VA|m?A|V|s|sec(onds?)?|sek(unden)?|ms|min(ute[sn]?)?|h|hours?|stunden|d|days?|hPa|m?bar|k?Pa|Hz|rpm|ppm|m3\/h|l\/min|text|[dDmMyYhHsSjJaATt:./ -]{4,23}|utc|local|iso(?: ?8601)?|-|—|#|unix|epoch|bool)$/i;
 
 function thermocoupleOf(text: string): ThermocoupleType | null {
   const found = TYPE.exec(text);
