@@ -1,21 +1,24 @@
-import type { Profile } from '../profile/schema';
+import { fuelOf } from '../planning';
+import { type CautionContext, cautionsOf } from './cautions';
 import type { Caution, Estimate } from './estimate-schema';
-import { fuelUse } from './fuel-use';
-import type { KilnPlate } from './kiln-schema';
-import type { Load } from './load-schema';
 import { readyS, slowestMould } from './readiness';
-import { simulate } from './simulate';
+import { type FiringInput, simulate } from './simulate';
 import type { MouldTrace, Simulation } from './simulation';
 
-/** What an estimate is made from. Clock, tariff and locale play no part in it. */
-export interface EstimateInput {
-  profile: Profile;
-  kiln: KilnPlate;
-  load: Load;
-  ambientC: number;
+/** What an estimate is made from. */
+export interface EstimateInput extends FiringInput {
   /** Line of the load whose curves are wanted; null or absent: the slowest mould. */
   mouldIndex?: number | null;
+  /** What the cautions need besides; absent: nothing is known of start, hours of attendance and thermocouple. */
+  context?: CautionContext;
 }
+
+const NOTHING_KNOWN: CautionContext = {
+  startMs: null,
+  offsetMinutesAt: () => 0,
+  attendedHours: null,
+  thermocouple: null,
+};
 
 /**
  * What the models say of one firing: how long it takes, what it uses, what the kiln and the moulds really do.
@@ -27,8 +30,9 @@ export interface EstimateInput {
  * @throws RangeError where the materials table lacks a material that is named, or the load has no mould of that index
  */
 export function estimate(input: EstimateInput): Estimate {
-  const { mouldIndex, ...firing } = input;
-  return estimateOf(simulate(firing), { mouldIndex: mouldIndex ?? null, cautions: [] });
+  const { mouldIndex = null, context = NOTHING_KNOWN, ...firing } = input;
+  const simulation = simulate(firing);
+  return estimateOf(simulation, { mouldIndex, cautions: cautionsOf(simulation, context) });
 }
 
 /** The estimate that a simulation amounts to. */
@@ -44,7 +48,7 @@ export function estimateOf(
     plannedS: simulation.plannedS,
     predictedS: simulation.predictedS,
     energyKWh: simulation.energy.inKWh,
-    ...fuelUse(simulation.kiln, simulation.energy.inKWh),
+    ...fuelUse(simulation),
     co2Kg: 0,
     cost: null,
     peakC: simulation.chamberC.reduce((peak, value) => Math.max(peak, value), -Infinity),
@@ -87,4 +91,8 @@ function list(series: Float64Array | undefined): number[] {
   const values = new Array<number>(series.length);
   for (let i = 0; i < series.length; i++) values[i] = series[i]!;
   return values;
+}
+
+function fuelUse({ kiln, energy }: Simulation): { fuelKg: number; fuelM3: number } {
+  return kiln.energy === 'gas' ? fuelOf(kiln.fuel, energy.inKWh) : { fuelKg: 0, fuelM3: 0 };
 }
