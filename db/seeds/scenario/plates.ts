@@ -77,7 +77,7 @@ export const YARD_KILN: DemoKiln = {
     innerHeightM: 0.75,
     lining: 'brick-and-fibre',
     liningM: 0.18,
-    burnerKW: 62,
+    burnerKW: 30,
     fuel: 'propane',
     maxC: 1250,
     waitBandC: 25,

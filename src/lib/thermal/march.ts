@@ -130,8 +130,8 @@ export class March {
 
   #hasArrived(segment: Segment): boolean {
     const { bandC, gaveUp } = this.programmer;
-    if (gaveUp) return false;
-    return bandC !== null || Math.abs(this.#readingC - segment.toC) <= ARRIVED_C;
+    if (Math.abs(this.#readingC - segment.toC) <= ARRIVED_C) return true;
+    return bandC !== null && !gaveUp;
   }
 
   #runPhase(): void {
