@@ -178,11 +178,10 @@ export function statedUnit(column: Column): ReturnType<typeof unitCell> {
   return column.words.otherUnit ? { temperature: null, other: column.words.otherUnit } : null;
 }
 
-/** Whether a column holds readings: numbers, or nothing but gaps under a name that says what would be measured. */
+/** Whether a column holds readings: numbers, or nothing but gaps under a name that says a temperature would be measured. */
 export function isReading(column: Column): boolean {
   if (column.numbers > 0) return column.numbers >= column.texts && column.stampCount < column.numbers;
   if (column.texts > 0 || column.stampCount > 0) return false;
-  if (column.spokenMarkers > 0) return true;
   return (
     column.words.temperature ||
     column.words.temperatureUnit !== null ||
