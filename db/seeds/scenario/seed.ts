@@ -100,7 +100,6 @@ async function seedQuarryLane(now: Date): Promise<Seeded> {
       'in-review',
     ),
     refire: await profile('tech', 'Refire to pour', 'refire', 'emptyShells', kilnIds.tall, 'approved'),
-    medal: await profile('student', 'Medal, first try', 'medal', 'printedShells', kilnIds.tall, 'draft'),
   };
   const students = (['student', 'studentTwo', 'studentThree'] as const).map((key) => actor(key).userId);
   const teacher = actor('teacher');
@@ -122,7 +121,9 @@ async function seedQuarryLane(now: Date): Promise<Seeded> {
     },
     now,
   );
-  return { kilnIds, versionIds };
+  // A student sees a kiln once something was handed out for it.
+  const medal = await profile('student', 'Medal, first try', 'medal', 'printedShells', kilnIds.tall, 'draft');
+  return { kilnIds, versionIds: { ...versionIds, medal } };
 }
 
 async function profile(
