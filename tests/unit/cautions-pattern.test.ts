@@ -29,7 +29,7 @@ describe('a pattern that expands first', () => {
       { severity: 'warn' },
     ]);
     expect(found({ profile: slow, load: resin({ thickestM: 0.004 }) }, code)[0]?.text).toMatch(
-      /4.0 mm.*80.°C/,
+      /4.mm thick.*80.°C.*2\.5.mm/,
     );
     expect(found({ profile: slow, load: resin({ thickestM: 0.0025 }) }, code)).toEqual([]);
     expect(found({ profile: slow, load: resin({ thickestM: 0.004, hollow: true }) }, code)).toEqual([]);

@@ -51,17 +51,16 @@ function solidThermoset(mould: WithPattern, view: FiringView): Caution[] {
   if (own.thickestM !== null && own.thickestM <= limit.value) return [];
   const where = pushing(mould, view, softens.value);
   if (where === null) return [];
-  const limitMm = `${(limit.value * 1000).toFixed(1)} mm`;
   const burnsFrom = view.words.temp(softens.value);
   const solid =
     own.thickestM === null
       ? 'How thick it is has not been said; solid, '
-      : `Solid and ${(own.thickestM * 1000).toFixed(1)} mm thick, `;
+      : `Solid and ${view.words.length(own.thickestM)} thick, `;
   return [
     {
       ...where,
       severity: own.thickestM === null ? 'note' : 'warn',
-      text: `${material.name} in ${inSentence(mould.name)} never melts. ${solid}it pushes on the mould from about ${burnsFrom} until it burns. Up to ${limitMm}, or hollow, is safer.`,
+      text: `${material.name} in ${inSentence(mould.name)} never melts. ${solid}it pushes on the mould from about ${burnsFrom} until it burns. Up to ${view.words.length(limit.value)}, or hollow, is safer.`,
       source: limit.source,
     },
   ];
@@ -107,7 +106,7 @@ function shutInPrint(mould: WithPattern, view: FiringView): Caution[] {
     {
       ...where,
       severity: 'warn',
-      text: `${material.name} in ${inSentence(mould.name)} is solid and ${(own.thickestM * 1000).toFixed(1)} mm thick, and no segment lets it out. It swells from ${view.words.temp(softens)} on and pushes on the mould.`,
+      text: `${material.name} in ${inSentence(mould.name)} is solid and ${view.words.length(own.thickestM)} thick, and no segment lets it out. It swells from ${view.words.temp(softens)} on and pushes on the mould.`,
       source: 'Parts thicker than 3 mm want a way out or a hollow build (common practice)',
     },
   ];

@@ -9,6 +9,7 @@ import {
 import {
   formatDuration,
   formatInterval,
+  formatLength,
   formatMass,
   formatRate,
   formatTemperature,
@@ -54,6 +55,7 @@ export interface Words {
   rate: (rateCPerH: number) => string;
   time: (durationS: number) => string;
   mass: (massKg: number) => string;
+  length: (lengthM: number) => string;
 }
 
 /** A firing as the rules look at it. */
@@ -95,7 +97,7 @@ function mouldView(trace: MouldTrace, mould: Mould | undefined): MouldView[] {
 }
 
 export function firingView(simulation: Simulation, context: CautionContext): FiringView {
-  const { temperature: scale, mass } = context.units ?? METRIC;
+  const { temperature: scale, mass, length } = context.units ?? METRIC;
   return {
     simulation,
     context,
@@ -106,6 +108,7 @@ export function firingView(simulation: Simulation, context: CautionContext): Fir
       rate: (rateCPerH) => formatRate(rateCPerH, scale),
       time: formatDuration,
       mass: (massKg) => formatMass(massKg, mass),
+      length: (lengthM) => formatLength(lengthM, length),
     },
   };
 }
