@@ -29,6 +29,11 @@ export const kilnSchema = z.discriminatedUnion('energy', [
   gasKilnSchema.extend({ ...kilnOwn, ...kept }),
 ]);
 export type Kiln = z.infer<typeof kilnSchema>;
+/** A kiln described on the spot, for an estimate: as it would be added, a name not needed. */
+export const describedKilnSchema = z.discriminatedUnion('energy', [
+  electricKilnSchema.extend({ ...kilnOwn, name: nameSchema.optional() }),
+  gasKilnSchema.extend({ ...kilnOwn, name: nameSchema.optional() }),
+]);
 /** PATCH merges into the kiln and the whole is then validated as `kilnInputSchema`. */
 const patchSchema = z.record(z.string().max(60), z.unknown());
 

@@ -1,6 +1,5 @@
 import { profileSchema } from '../profile/schema';
 import { estimateSchema } from '../thermal/estimate-schema';
-import { kilnPlateSchema } from '../thermal/kiln-schema';
 import { loadSchema } from '../thermal/load-schema';
 import { z } from '../zod';
 import {
@@ -13,6 +12,7 @@ import {
   personSchema,
   revisionSchema,
 } from './common';
+import { describedKilnSchema } from './equipment';
 import { defineRoute } from './route';
 
 export const VERSION_STATES = ['draft', 'in-review', 'approved', 'retired'] as const;
@@ -87,7 +87,7 @@ export const estimateRequestSchema = z
   .strictObject({
     profile: profileSchema,
     kilnId: idSchema.optional(),
-    kiln: kilnPlateSchema.optional(),
+    kiln: describedKilnSchema.optional(),
     load: loadSchema.optional(),
     ambientC: z.number().min(-30).max(50).default(20),
     startAt: instantSchema.optional(),

@@ -1,7 +1,6 @@
 import type { z } from '~/lib/zod';
 import type { Kiln } from '~/lib/contracts/equipment';
 import type { estimateRequestSchema, estimateRoutes } from '~/lib/contracts/profiles';
-import { findMaterial } from '~/lib/materials';
 import { co2Of, costOf, tariffFits, zoneOffset, type OffsetMinutesAt, type TariffPlan } from '~/lib/planning';
 import type { Profile } from '~/lib/profile/schema';
 import { issuesOf } from '~/lib/profile/validate';
@@ -18,7 +17,7 @@ import { notFound, notValid, type Issue } from '../errors';
 import { studioRules } from '../repositories/studio-rules';
 import { thermocouples } from '../repositories/thermocouples';
 import { loadIssues } from './content-check';
-import { kilnFor, plateOf } from './kilns';
+import { kilnFor, liningIssues, plateOf, requireLinks } from './kilns';
 import { tariffFor } from './tariffs';
 
 type Request = z.output<typeof estimateRequestSchema>;
@@ -38,9 +37,8 @@ export async function estimateFiring(
   query: Query,
   now = new Date(),
 ): Promise<Estimate> {
-  const kiln = request.kilnId === undefined ? null : await kilnFor(actor, request.kilnId);
-  const plate = kiln ? plateOf(kiln) : request.kiln;
-  if (!plate) throw notValid('Say which kiln.', [{ path: 'kilnId', message: 'a kiln is needed' }]);
+  const kiln = await kilnOf(actor, request);
+  const plate = plateOf(kiln);
   const load = request.load ?? loadSchema.parse({});
   requireComputable(request.profile, plate, load, query);
   const plan = await planFor(actor, request, kiln, plate);
@@ -52,6 +50,17 @@ export async function estimateFiring(
     cautions: cautionsOf(simulation, context),
   });
   return { ...found, ...priced(actor, simulation, plan, startMs ?? now.getTime(), context.offsetMinutesAt) };
+}
+
+type Links = Pick<Kiln, 'thermocoupleId' | 'tariffId'>;
+
+/** The studio's kiln that the request names, or the one it describes, whose links must be the studio's. */
+async function kilnOf(actor: Actor, { kilnId, kiln }: Request) {
+  if (kilnId !== undefined) return kilnFor(actor, kilnId);
+  if (!kiln) throw notValid('Say which kiln.', [{ path: 'kilnId', message: 'a kiln is needed' }]);
+  if (isOnlyStudent(actor)) return { ...kiln, thermocoupleId: null, tariffId: null };
+  await requireLinks(actor, kiln);
+  return kiln;
 }
 
 /** Cautions of a version in a kiln, whenever it is fired: what its approval and its handouts go by. */
@@ -69,14 +78,12 @@ export async function versionCautions(
 /** What the rules go by besides the curves: the studio's hours, zone and units, and the kiln's thermocouple. */
 async function contextOf(
   { studioId }: Actor,
-  kiln: Kiln | null,
+  { thermocoupleId }: Links,
   startMs: number | null,
   tx?: Tx,
 ): Promise<CautionContext> {
   const rules = await studioRules(studioId, tx);
-  const thermocouple = kiln?.thermocoupleId
-    ? await thermocouples.find(studioId, kiln.thermocoupleId, tx)
-    : null;
+  const thermocouple = thermocoupleId ? await thermocouples.find(studioId, thermocoupleId, tx) : null;
   return {
     startMs,
     offsetMinutesAt: zoneOffset(rules.timeZone),
@@ -104,7 +111,7 @@ function priced(
 async function planFor(
   actor: Actor,
   request: Request,
-  kiln: Kiln | null,
+  kiln: Links,
   plate: KilnPlate,
 ): Promise<TariffPlan | null> {
   if (request.tariffId !== undefined) {
@@ -116,23 +123,15 @@ async function planFor(
       ]);
     return tariff.plan;
   }
-  const own = kiln ? await tariffOfKiln(actor, kiln) : null;
-  return own && tariffFits(own, plate) ? own : null;
-}
-
-async function tariffOfKiln(actor: Actor, kiln: Kiln): Promise<TariffPlan | null> {
-  return (await tariffFor(actor, kiln.tariffId))?.plan ?? null;
+  const own = await tariffFor(actor, kiln.tariffId);
+  return own && tariffFits(own.plan, plate) ? own.plan : null;
 }
 
 /** What the schemas of the request cannot say: planned length, materials that the table has, a mould that is there. */
 function requireComputable(profile: Profile, plate: KilnPlate, load: Load, query: Query): void {
   const issues: Issue[] = [
     ...issuesOf(profile).map((issue) => ({ ...issue, path: `profile.${issue.path}` })),
-    ...plate.liningLayers.flatMap(({ material }, index) =>
-      findMaterial('linings', material)
-        ? []
-        : [{ path: `kiln.liningLayers.${index}.material`, message: `no lining is called '${material}'` }],
-    ),
+    ...liningIssues(plate).map((issue) => ({ ...issue, path: `kiln.${issue.path}` })),
     ...loadIssues(load),
   ];
   if (query.mould !== undefined && query.mould >= load.moulds.length)

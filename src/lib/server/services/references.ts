@@ -14,7 +14,7 @@ interface Reference {
 export async function requireReferences(
   references: readonly Reference[],
   actor: Actor,
-  tx: Tx,
+  tx?: Tx,
 ): Promise<void> {
   for (const { path, id, noun, repository } of references) {
     if (id !== null && !(await repository.find(actor.studioId, id, tx)))
