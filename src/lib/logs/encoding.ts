@@ -79,5 +79,4 @@ export class TextStream {
   }
 }
 
-// eslint-disable-next-line no-control-regex -- ASCII includes the control characters
-const NOT_ASCII = /[^\x00-\x7f]/;
+const NOT_ASCII = /\P{ASCII}/u;

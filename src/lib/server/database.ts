@@ -1,4 +1,4 @@
-import { Sequelize, type Transaction } from 'sequelize';
+import { Sequelize, UniqueConstraintError, type Transaction } from 'sequelize';
 import { config } from './config';
 import { initModels } from './models';
 
@@ -29,3 +29,6 @@ export type Tx = Transaction;
 export function inTransaction<T>(work: (tx: Tx) => Promise<T>): Promise<T> {
   return database().transaction(work);
 }
+
+/** Whether a write failed because what it adds is there already. */
+export const isDuplicate = (error: unknown): boolean => error instanceof UniqueConstraintError;

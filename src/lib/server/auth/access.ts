@@ -122,7 +122,7 @@ export const ACCESS: readonly AccessRule[] = [
   api('/runs/[id]/findings', { GET: EVERY_ROLE, POST: ['technician', 'teacher'] }),
   api('/runs/[id]/findings/[findingId]', { PATCH: ['technician', 'teacher'] }),
   api('/runs/[id]/logs', { POST: EVERY_ROLE }),
-  api('/runs/[id]/logs/[logId]', { GET: EVERY_ROLE }),
+  api('/runs/[id]/logs/[logId]', { GET: EVERY_ROLE, PATCH: EVERY_ROLE }),
   api('/runs/[id]/logs/[logId]/original', { GET: EVERY_ROLE }),
   api('/runs/[id]/logs/[logId]/answers', { POST: EVERY_ROLE }),
 ];

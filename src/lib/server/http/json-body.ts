@@ -49,9 +49,26 @@ async function readText(request: Request, maxBytes: number): Promise<string> {
     }
     parts.push(decoder.decode());
   } catch (error) {
-    await reader.cancel().catch(() => undefined);
+    await drain(reader);
     if (error instanceof HoldfastError) throw error;
     throw new HoldfastError('malformed', 'The body is not UTF-8 text, or it broke off.');
   }
   return parts.join('');
+}
+
+/** To break off a body breaks off the connection, and the refusal with it: what is left of a moderate one is let run out. */
+async function drain(
+  reader: ReadableStreamDefaultReader<Uint8Array>,
+  maxBytes = 32 * MAX_JSON_BYTES,
+): Promise<void> {
+  try {
+    for (let left = maxBytes; left > 0;) {
+      const { done, value } = await reader.read();
+      if (done) return;
+      left -= value.byteLength;
+    }
+    await reader.cancel();
+  } catch {
+    // It broke off by itself.
+  }
 }

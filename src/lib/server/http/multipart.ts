@@ -104,9 +104,8 @@ const tooLarge = (maxBytes: number) =>
 /** The last part of the name, without control characters: kept for people to recognise, never used as a path. */
 function plainFileName(name: string | undefined): string {
   const last = (name ?? '').split(/[\\/]/).at(-1) ?? '';
-  // eslint-disable-next-line no-control-regex -- control characters are what is to be removed
   const clean = last
-    .replace(/[\u0000-\u001f\u007f\u202a-\u202e\u2066-\u2069]/g, '')
+    .replace(/[\p{Cc}\u202a-\u202e\u2066-\u2069]/gu, '')
     .trim()
     .slice(0, 200);
   return clean === '' ? 'log.csv' : clean;

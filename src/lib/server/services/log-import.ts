@@ -1,10 +1,9 @@
 import { randomUUID } from 'node:crypto';
-import { UniqueConstraintError } from 'sequelize';
 import type { Log } from '~/lib/contracts/logs';
 import { parseMapping, type LogQuestion, type Mapping } from '~/lib/logs/schema';
 import type { LogReading, Refusal } from '~/lib/logs/types';
 import type { Actor } from '../auth/actor';
-import { inTransaction, type Tx } from '../database';
+import { inTransaction, isDuplicate, type Tx } from '../database';
 import { HoldfastError, notFound, notValid, wrongState } from '../errors';
 import type { TakeFile } from '../http/multipart';
 import { findLog, insertLog, mappingKey, type StoredReport } from '../repositories/logs';
@@ -119,7 +118,7 @@ async function takeUpload(actor: Actor, run: RunRecord, receive: Receive, tx: Tx
     await insertUpload({ ...upload, studioId, uploadedBy: actor.userId }, tx);
   } catch (error) {
     // The same file sent twice at once: the other one was first.
-    if (error instanceof UniqueConstraintError) throw new KeptBefore(sha256, mapping);
+    if (isDuplicate(error)) throw new KeptBefore(sha256, mapping);
     throw error;
   }
   return conclude(actor, run, upload, mapping, session, reading, tx);
