@@ -1,3 +1,4 @@
+import { islandProps } from '~/lib/client/island-props';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useMemo } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
@@ -59,7 +60,7 @@ function Heat({ form }: { readonly form: FormTools<FurnaceTyped> }) {
 
 /** A melting furnace: new, or to be changed. */
 export default function FurnaceForm(given: FurnaceFormProps) {
-  const props = useMemo(() => furnaceFormPropsSchema.parse(given), [given]);
+  const props = useMemo(() => islandProps(furnaceFormPropsSchema, given), [given]);
   const { furnace, units } = props;
   const schema = useMemo(() => furnaceFormSchema(units), [units]);
   const { register, control, handleSubmit, setError, formState } = useForm<FurnaceTyped>({

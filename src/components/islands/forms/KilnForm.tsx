@@ -1,3 +1,4 @@
+import { islandProps } from '~/lib/client/island-props';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useMemo } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
@@ -173,7 +174,7 @@ const withNone = (items: readonly { id: string; name: string }[], none: string) 
 
 /** A kiln from what is on its plate: new, or to be changed. */
 export default function KilnForm(given: KilnFormProps) {
-  const props = useMemo(() => kilnFormPropsSchema.parse(given), [given]);
+  const props = useMemo(() => islandProps(kilnFormPropsSchema, given), [given]);
   const { kiln, units } = props;
   const schema = useMemo(() => kilnFormSchema(units), [units]);
   const { register, control, handleSubmit, setError, formState } = useForm<KilnTyped>({

@@ -1,3 +1,4 @@
+import { islandProps } from '~/lib/client/island-props';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useMemo } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
@@ -63,7 +64,7 @@ function Price({ form }: { readonly form: FormTools<TariffTyped> }) {
 
 /** A tariff with its prices by time of use: new, or to be changed. */
 export default function TariffForm(given: TariffFormProps) {
-  const { tariff } = useMemo(() => tariffFormPropsSchema.parse(given), [given]);
+  const { tariff } = useMemo(() => islandProps(tariffFormPropsSchema, given), [given]);
   const { register, control, handleSubmit, setError, formState } = useForm<TariffTyped>({
     defaultValues: tariffTyped(tariff),
     resolver: zodResolver(tariffFormSchema, undefined, { raw: true }),

@@ -1,3 +1,4 @@
+import { islandProps } from '~/lib/client/island-props';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useMemo } from 'react';
 import { useFieldArray, useForm } from 'react-hook-form';
@@ -61,7 +62,7 @@ function Calibration({ form }: { readonly form: FormTools<ThermocoupleTyped> }) 
 
 /** A thermocouple: new, or to be changed. */
 export default function ThermocoupleForm(given: ThermocoupleFormProps) {
-  const { thermocouple, units } = useMemo(() => thermocoupleFormPropsSchema.parse(given), [given]);
+  const { thermocouple, units } = useMemo(() => islandProps(thermocoupleFormPropsSchema, given), [given]);
   const schema = useMemo(() => thermocoupleFormSchema(units), [units]);
   const { register, control, handleSubmit, setError, formState } = useForm<ThermocoupleTyped>({
     defaultValues: thermocoupleTyped(thermocouple, units),

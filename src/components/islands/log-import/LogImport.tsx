@@ -1,3 +1,4 @@
+import { islandProps } from '~/lib/client/island-props';
 import { useId, useMemo, useRef, useState, type DragEvent } from 'react';
 import { sentenceFor } from '~/lib/client/api';
 import type { Log, LogQuestions } from '~/lib/contracts/logs';
@@ -17,7 +18,7 @@ type Phase =
 
 /** Takes a thermocouple log by drop or choice, shows how far it is, asks what the file leaves open, and says what was read. */
 export default function LogImport(given: LogImportProps) {
-  const props = useMemo(() => logImportPropsSchema.parse(given), [given]);
+  const props = useMemo(() => islandProps(logImportPropsSchema, given), [given]);
   const [phase, setPhase] = useState<Phase>({ at: 'waiting' });
   const [problem, setProblem] = useState<string | null>(null);
   const [over, setOver] = useState(false);

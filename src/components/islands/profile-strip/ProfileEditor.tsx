@@ -1,3 +1,4 @@
+import { islandProps } from '~/lib/client/island-props';
 import { ServerData } from '~/lib/client/query';
 import { UnitsProvider } from '~/lib/client/units';
 import { EditorPage } from './EditorPage';
@@ -6,7 +7,7 @@ import { profileEditorPropsSchema, type ProfileEditorInput } from './props';
 
 /** The profile editor as an island. Its props come from the page and are parsed here. */
 export default function ProfileEditor(input: ProfileEditorInput) {
-  const props = profileEditorPropsSchema.parse(input);
+  const props = islandProps(profileEditorPropsSchema, input);
   return (
     <ServerData>
       <UnitsProvider units={props.me.preferences.units ?? props.me.studio.units}>

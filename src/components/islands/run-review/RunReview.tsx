@@ -1,3 +1,4 @@
+import { islandProps } from '~/lib/client/island-props';
 import { useCallback, useMemo, useState } from 'react';
 import { ServerData } from '~/lib/client/query';
 import { UnitsProvider } from '~/lib/client/units';
@@ -18,7 +19,7 @@ import { around } from './view';
 
 /** The review of a run: verdict and figures, the strip, its findings and what is said of each. */
 export default function RunReview(given: RunReviewProps) {
-  const props = useMemo(() => runReviewPropsSchema.parse(given), [given]);
+  const props = useMemo(() => islandProps(runReviewPropsSchema, given), [given]);
   return (
     <ServerData>
       <UnitsProvider units={props.me.preferences.units ?? props.me.studio.units}>
