@@ -26,7 +26,8 @@ export default defineConfig({
           name: 'browser',
           include: ['tests/e2e/**/*.test.ts'],
           globalSetup: ['tests/helpers/global-setup.ts'],
-          fileParallelism: false,
+          // One browser at a time: two on two cores would wait for each other.
+          poolOptions: { forks: { singleFork: true } },
           testTimeout: 180_000,
         },
       },

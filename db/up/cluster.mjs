@@ -127,6 +127,15 @@ function isServerOf(pid, pg) {
   }
 }
 
+/** The port of the server that runs on a cluster now, or null. */
+export function runningPort(place) {
+  const { pg } = filesOf(place);
+  const file = join(pg, 'postmaster.pid');
+  if (!existsSync(file)) return null;
+  const [pid, , , port] = readFileSync(file, 'utf8').split('\n');
+  return isServerOf(Number(pid), pg) ? Number(port) : null;
+}
+
 /** In a session of its own, so that Ctrl-C reaches the web server first; told by the kernel when this process is gone. */
 function launch(bin, place, settings) {
   const { pg, log } = filesOf(place);

@@ -48,7 +48,8 @@ export async function setUp(
 
 function isTimeZone(name: string): boolean {
   try {
-    return new Intl.DateTimeFormat('en', { timeZone: name }) !== undefined;
+    new Intl.DateTimeFormat('en', { timeZone: name }).format();
+    return true;
   } catch {
     return false;
   }
