@@ -112,11 +112,7 @@ function junctionOf(entry: ChannelDraft, drafts: readonly ChannelDraft[]): Chann
   if (channel !== undefined) return { channel };
   const type = entry.thermocouple;
   if (!type) return { tempC: 0 };
-  const first = entry.column.values
-    .filter((value) => !Number.isNaN(value))
-    .slice(0, 9)
-    .sort((a, b) => a - b);
-  const start = first[first.length >> 1] ?? NaN;
+  const start = Math.min(...entry.column.values.filter((value) => !Number.isNaN(value)).slice(0, 5));
   const referencedC = temperatureC(type, start);
   if (referencedC >= 8) return { tempC: 0 };
   const openC = compensatedC(type, start, ROOM_C);

@@ -77,7 +77,8 @@ function openUnit(
   const open = drafts.flatMap((entry, i) =>
     quantities[i] === 'temperature' && entry.unit === null ? [i] : [],
   );
-  const hottest = open.reduce<number | null>(
+  const telling = open.filter((i) => !drafts[i]?.setpoint && (statistics[i]?.samples ?? 0) > 0);
+  const hottest = (telling.length > 0 ? telling : open).reduce<number | null>(
     (best, i) =>
       best === null || (statistics[i]?.max ?? -Infinity) > (statistics[best]?.max ?? -Infinity) ? i : best,
     null,

@@ -19,9 +19,9 @@ const NAMES: [RegExp, ElapsedUnit['name']][] = [
   [/(?:^|[^a-z])(?:h|hrs?|hours?|std|stunden?|heures?|horas?|ore|uur|uren)(?![a-z])/i, 'h'],
   [/(?:^|[^a-z])(?:d|days?|tage?|jours?|d[íi]as?|giorni)(?![a-z])/i, 'd'],
 ];
-/** Fastest and slowest climb that a kiln's log shows over a twentieth of it, °C/h; longest firing. */
+/** Fastest climb that a kiln's log shows over a twentieth of it, and the slowest that its fastest is, °C/h (common practice); longest firing. */
 const FASTEST_PER_H = 4000;
-const SLOWEST_PER_H = 4;
+const SLOWEST_PER_H = 20;
 const LONGEST_MS = 16 * 86_400_000;
 
 /**

@@ -101,6 +101,7 @@ export function headerWords(name: string): HeaderWords {
 /** The unit of a cell in a units row or behind a word such as “Unit:”, and whether it is one at all. */
 export function unitCell(cell: string): { temperature: TemperatureUnit | null; other: string | null } | null {
   const text = cell.trim().replace(/^[[({<]\s*|\s*[\])}>]$/g, '');
+  const bracketed = text.length <= 12 && /^[[({<].*[\])}>]$/.test(cell.trim());
   if (text === '' || /^[-–—]+$/.test(text)) return { temperature: null, other: null };
   if (
     /^(?:°|º|\ufffd|deg\.?\s?|grad\s?)?c°?$|^℃$|^(?:grad |degrees? |gradi |degr[eé]s )?celsius$/i.test(text)
@@ -111,11 +112,11 @@ export function unitCell(cell: string): { temperature: TemperatureUnit | null; o
     return { temperature: 'F', other: null };
   if (/^(?:°|deg\.?\s?)?k$|^kelvin$/i.test(text)) return { temperature: 'K', other: null };
   if (/^m[vV]$|^millivolts?$/i.test(text)) return { temperature: 'mV', other: null };
-  if (UNIT_WORD.test(text)) return { temperature: null, other: text };
+  if (bracketed || UNIT_WORD.test(text)) return { temperature: null, other: text };
   return null;
 }
 const UNIT_WORD =
-  /^(?:%|% ?r\.?h\.?|pct|k?W|k?Wh|k?VA|m?A|V|s|sec(onds?)?|sek(unden)?|ms|min(ute[sn]?)?|h|hours?|stunden|d|days?|hPa|m?bar|k?Pa|Hz|rpm|ppm|m3\/h|l\/min|text|[dDmMyYhHsSjJaATt:./ -]{4,23}|utc|local|iso(?: ?8601)?|-|—|#|unix|epoch|bool)$/i;
+  /^(?:%|% ?r\.?h\.?|pct|k?W|k?Wh|k?VA|m?A|V|s|sec(onds?)?|sek(unden)?|ms|min(ute[sn]?)?|h|hours?|stunden|d|days?|hPa|m?bar|k?Pa|[mk]?g|m|mm|cm|Hz|rpm|ppm|m3\/h|l\/min|text|[dDmMyYhHsSjJaATt:./ -]{4,23}|utc|local|iso(?: ?8601)?|-|—|#|unix|epoch|bool)$/i;
 
 function thermocoupleOf(text: string): ThermocoupleType | null {
   const found = TYPE.exec(text);

@@ -76,7 +76,8 @@ export class OrderKeeper {
         ms += shiftMs;
       }
       timeMs[i] = ms;
-      if (i > 0 && ms > this.lastMs) this.noteStep(ms - this.lastMs, i);
+      const stepMs = this.descending ? this.lastMs - ms : ms - this.lastMs;
+      if (i > 0 && stepMs > 0) this.noteStep(stepMs, i);
       this.lastMs = ms;
     }
     this.window.push(block);

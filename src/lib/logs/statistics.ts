@@ -1,6 +1,6 @@
 import type { LogBlock } from './types';
 
-const FIRST_VALUES = 9;
+const FIRST_VALUES = 5;
 const SPARSE = 8;
 
 /** What is kept of one channel while its rows pass: extremes, ends, counts. */
@@ -125,10 +125,9 @@ function compare(
   channel.apart[other] = (channel.apart[other] ?? 0) + apart;
 }
 
-/** Median of the first few values of a channel; NaN without any. */
+/** Where a channel begins: the least of its first few values, for a log that climbs from its first row on. NaN without any. */
 export function startOf(channel: ChannelStatistics): number {
-  const sorted = [...channel.firstValues].sort((a, b) => a - b);
-  return sorted[sorted.length >> 1] ?? NaN;
+  return channel.firstValues.length === 0 ? NaN : Math.min(...channel.firstValues);
 }
 
 /** Share of the compared rows in which two channels are apart; 0 where they were never seen together. */

@@ -7,7 +7,7 @@ import type { Mapping } from './schema';
 /** Where the time of a row comes from. */
 export type TimeSource =
   | { kind: 'stamp'; column: number }
-  | { kind: 'date-and-clock'; dateColumn: number; clockColumn: number }
+  | { kind: 'date-and-clock'; dateColumn: number; clockColumn: number; compact: boolean }
   | { kind: 'clock'; column: number }
   | { kind: 'duration'; column: number; unit: 'h:mm:ss' | 'h:mm' | 'm:ss' }
   | { kind: 'epoch'; column: number; msPerUnit: number }
@@ -26,7 +26,7 @@ export interface TimeChoice {
 }
 
 const INDEX_NAME =
-  /^(?:no|nr|n°|n|#|idx|index|id|row|line|rec(?:ord)?|samples?|scan|count(?:er)?|seq(?:uence)?|lfd\.?\s?(?:nr)?|zeile|pos(?:ition)?|reading|point|messung|nummer|number|num|column 1)\.?(?:\s?(?:no|nr|#)\.?)?$/i;
+  /^(?:no|nr|n°|n|#|idx|index|id|row|line|rec(?:ord)?|samples?|scan|count(?:er)?|seq(?:uence)?|lfd\.?\s?(?:nr)?|zeile|pos(?:ition)?|reading|point|messung|nummer|number|num)\.?(?:\s?(?:no|nr|#)\.?)?$/i;
 const ELAPSED_NAME =
   /elapsed|time|^t$|^t[ _/([]|^t\d?_?s$|\bsec|\bsek|\bmin(?!imum)|hour|stunde|zeit|dauer|laufzeit|run.?time|dur[ée]e|temps|tiempo|tempo|duration|^s$|^h$|^ms$|seconds?|minutes?/i;
 const SECOND_HAND =
@@ -73,7 +73,22 @@ export function chooseTime(columns: readonly Column[], mapping: Mapping): TimeCh
   const [date] = dates;
   const clock = clocks.find((column) => !isDuration(column)) ?? clocks[0];
   if (date && clock)
-    return chosen({ kind: 'date-and-clock', dateColumn: date.index, clockColumn: clock.index });
+    return chosen({
+      kind: 'date-and-clock',
+      dateColumn: date.index,
+      clockColumn: clock.index,
+      compact: false,
+    });
+  const tight = date ? within.find(isCompactClock) : undefined;
+  if (date && tight) {
+    const pair = chosen({
+      kind: 'date-and-clock',
+      dateColumn: date.index,
+      clockColumn: tight.index,
+      compact: true,
+    });
+    return { ...pair, timeColumns: [...pair.timeColumns, tight.index] };
+  }
   if (clock) return chosen(clockOrDuration(clock));
   return chooseCounter(within, columns, asked, chosen);
 }
@@ -125,6 +140,18 @@ const isDateOnly = (column: Column): boolean =>
   column.stamps.filter((s) => s?.date && s.clockMs === null).length >= Math.max(1, most(column));
 const isClockOnly = (column: Column): boolean =>
   filled(column) && column.stamps.filter((s) => s && !s.date).length >= Math.max(1, most(column));
+
+/** `070000` beside a date: six digits, each pair of which a clock can show. */
+function isCompactClock(column: Column): boolean {
+  if (column.maxDecimals > 0 || !/time|zeit|heure|hora|\bora\b|clock|uhr|tijd/i.test(column.name))
+    return false;
+  const values = column.values.filter((value) => !Number.isNaN(value));
+  const fits = (value: number): boolean =>
+    value < 240_000 && value % 100 < 60 && Math.floor(value / 100) % 100 < 60;
+  return (
+    values.length >= Math.max(1, most(column)) && values.every(fits) && values.some((value) => value > 2400)
+  );
+}
 
 /** Whether a column of h:mm:ss counts from the start rather than telling the time of day. */
 function isDuration(column: Column): boolean {

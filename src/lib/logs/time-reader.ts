@@ -39,7 +39,7 @@ export function timeReader(source: TimeSource, settings: TimeSettings): TimeRead
     case 'stamp':
       return stampReader(source.column, settings);
     case 'date-and-clock':
-      return dateAndClockReader(source.dateColumn, source.clockColumn, settings);
+      return dateAndClockReader(source, settings);
     case 'clock':
       return clockReader(source.column, settings);
     case 'duration':
@@ -81,7 +81,10 @@ function stampReader(column: number, settings: TimeSettings): TimeReader {
 }
 
 /** A date that is left out takes over from the row before, a day on where the clock fell back over midnight. */
-function dateAndClockReader(dateColumn: number, clockColumn: number, settings: TimeSettings): TimeReader {
+function dateAndClockReader(
+  { dateColumn, clockColumn, compact }: Extract<TimeSource, { kind: 'date-and-clock' }>,
+  settings: TimeSettings,
+): TimeReader {
   const date = new StampCell(settings.order, settings.onDate);
   const clock = new StampCell(settings.order, null);
   const instant = toInstant(settings);
@@ -112,7 +115,10 @@ function dateAndClockReader(dateColumn: number, clockColumn: number, settings: T
     read(row) {
       const from = row.starts[clockColumn] ?? 0;
       const to = row.ends[clockColumn] ?? 0;
-      clockFailed = !(to > from && clock.read(row.text, from, to) && clock.ms <= DAY_MS);
+      const read = compact
+        ? clock.read(spaced(row.text.slice(from, to)), 0, 8)
+        : to > from && clock.read(row.text, from, to);
+      clockFailed = !(read && clock.ms <= DAY_MS);
       if (clockFailed || !readDate(row)) return NaN;
       previousClockMs = clock.ms;
       return instant(dateMs + clock.ms, clock.offsetMin);
@@ -121,6 +127,10 @@ function dateAndClockReader(dateColumn: number, clockColumn: number, settings: T
     end: () => date.flush(),
   };
 }
+
+/** `70000` as `07:00:00`; anything else stays what it is. */
+const spaced = (text: string): string =>
+  /^\d{1,6}$/.test(text) ? text.padStart(6, '0').replace(/^(..)(..)(..)$/, '$1:$2:$3') : text;
 
 /** A clock without a date: a fall of more than half a day is midnight, a rise of as much a late row from before it. */
 function clockReader(column: number, settings: TimeSettings): TimeReader {
