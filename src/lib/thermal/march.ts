@@ -20,7 +20,7 @@ export interface StepSettings {
   fixedS: number | null;
 }
 
-export const DEFAULT_STEPS: StepSettings = { toleranceC: 1.5, mostS: 600, fixedS: null };
+export const DEFAULT_STEPS: StepSettings = { toleranceC: 1, mostS: 600, fixedS: null };
 
 /** Whether the kiln is on its set point, or at full fire below it, or off above it. */
 export type Mode = 'follow' | 'full' | 'off';
@@ -39,6 +39,9 @@ export interface Watch {
 
 /** Longest firing computed, s: what is still to come after it is not. */
 export const HORIZON_S = 30 * 24 * 3600;
+/** Steps that no firing of a real kiln comes near (a month with 64 segments takes 5,000), and steps times bodies. */
+const MOST_STEPS = 40_000;
+const MOST_BODY_STEPS = 1_000_000;
 /** Slower than this where there is no rate to follow, the kiln is taken not to get there: the lowest rate of a profile, K/s. */
 const GIVE_UP_C_PER_S = 1 / 3600;
 const GIVE_UP_AFTER_S = 30;
@@ -49,6 +52,9 @@ const ARRIVED_C = 0.01;
 const MOST_TRIES = 60;
 /** Longest step of the cooling after the end, of which only the opening is asked, s. */
 const COOLING_MOST_S = 3600;
+
+/** A kiln and a load so far from any real one that their curve cannot be followed in reasonable time. */
+export class FiringTooStiff extends RangeError {}
 
 /** The march of one firing: chamber, programmer and clock. */
 export class March {
@@ -65,6 +71,7 @@ export class March {
   #fresh = true;
   #endHeatW = 0;
   #mostS: number;
+  readonly #mostSteps: number;
 
   constructor(
     chamber: Chamber,
@@ -79,6 +86,8 @@ export class March {
     this.watch = watch;
     this.settings = settings;
     this.#mostS = settings.mostS;
+    this.#mostSteps =
+      settings.fixedS === null ? Math.min(MOST_STEPS, MOST_BODY_STEPS / chamber.bodies.length) : Infinity;
   }
 
   /** Runs the programme to its end. */
@@ -202,8 +211,15 @@ export class March {
   #tooBold(stepS: number): number | null {
     const { toleranceC, fixedS } = this.settings;
     const { surpriseC } = this.chamber.trial;
-    if (fixedS !== null || surpriseC <= 3 * toleranceC || stepS <= PROBE_S) return null;
-    return stepS * Math.max(0.2, 0.9 * Math.sqrt(toleranceC / surpriseC));
+    // The first step after a corner foresees nothing: what it leaves out is of first order, so it must be smaller.
+    const mostC = this.#fresh ? toleranceC / 3 : 3 * toleranceC;
+    if (fixedS !== null || surpriseC <= mostC || stepS <= PROBE_S) return null;
+    return (
+      stepS *
+      (this.#fresh
+        ? Math.max(0.1, (0.8 * mostC) / surpriseC)
+        : Math.max(0.2, 0.9 * Math.sqrt(toleranceC / surpriseC)))
+    );
   }
 
   /** A shorter step where the kiln saturates, comes back to its set point or lets the programmer go on; null: nothing happens. */
@@ -288,6 +304,8 @@ export class March {
     takeStep(chamber);
     this.atS += stepS;
     this.steps++;
+    if (this.steps > this.#mostSteps)
+      throw new FiringTooStiff(`not computed: after ${this.steps} steps it is only at ${this.atS} s`);
     this.#fresh = false;
     this.#endHeatW = endHeatW;
     const growth = 0.9 * Math.sqrt(settings.toleranceC / Math.max(surpriseC, 1e-9));
