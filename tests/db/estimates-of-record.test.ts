@@ -125,6 +125,48 @@ describe('an estimate of record', () => {
   });
 });
 
+describe('a kiln of three megawatts in the space of a drainpipe', () => {
+  it('is refused in reasonable time, instead of holding everybody up', async () => {
+    const kiln = {
+      energy: 'gas',
+      innerWidthM: 0.05,
+      innerDepthM: 0.7,
+      innerHeightM: 20,
+      lining: 'brick',
+      liningM: 0.01,
+      burnerKW: 3000,
+      fuel: 'propane',
+      excessAirShare: 3,
+      maxC: 870,
+    };
+    const profile = {
+      startC: -20,
+      segments: [-2, 57, 900, -2, 1397, 7].map((toC) => ({
+        stage: 'burnout',
+        toC,
+        rateCPerH: 'flat-out',
+        holdS: 40_000,
+        vent: 'open',
+      })),
+    };
+    const moulds = [
+      {
+        form: 'flask',
+        material: 'fused-silica-shell',
+        count: 465,
+        massKg: 0.045,
+        diameterM: 0.05,
+        heightM: 1.4,
+      },
+      { material: 'phosphate-investment', count: 357, massKg: 0.014, wallM: 0.0068 },
+    ];
+    const began = performance.now();
+    const refused = await refusal(ask({ kilnId: undefined, kiln, profile, load: { moulds }, ambientC: 0 }));
+    expect([refused.status, refused.options.errors?.[0]?.path]).toEqual([422, 'kiln']);
+    expect(performance.now() - began).toBeLessThan(20_000);
+  });
+});
+
 describe('who may ask', () => {
   it('is nobody for another studio’s kiln or tariff', async () => {
     expect(await statusOf(ask({}, otherTech.actor))).toBe(404);

@@ -137,6 +137,7 @@ class FiringRecorder implements Watch {
  * @param input a valid profile, a kiln's plate, its load and the room's temperature (°C)
  * @param steps how finely time is taken; the default keeps each step within 1 K of what the step before foresaw
  * @throws RangeError where the materials table lacks a material that is named
+ * @throws FiringTooStiff for a kiln and a load so far from any real one that it would take too long
  */
 export function simulate(input: FiringInput, steps: StepSettings = DEFAULT_STEPS): Simulation {
   const { profile, kiln, load, ambientC } = input;

@@ -9,7 +9,6 @@ import type { Caution, Estimate } from '~/lib/thermal/estimate-schema';
 import { estimateOf } from '~/lib/thermal/estimate';
 import type { KilnPlate } from '~/lib/thermal/kiln-schema';
 import { loadSchema, type Load } from '~/lib/thermal/load-schema';
-import { simulate } from '~/lib/thermal/simulate';
 import type { Simulation } from '~/lib/thermal/simulation';
 import { isOnlyStudent, type Actor } from '../auth/actor';
 import type { Tx } from '../database';
@@ -17,6 +16,7 @@ import { notFound, notValid, type Issue } from '../errors';
 import { studioRules } from '../repositories/studio-rules';
 import { thermocouples } from '../repositories/thermocouples';
 import { loadIssues } from './content-check';
+import { simulated } from './firing';
 import { kilnFor, liningIssues, plateOf, requireLinks } from './kilns';
 import { tariffFor } from './tariffs';
 
@@ -44,7 +44,7 @@ export async function estimateFiring(
   const plan = await planFor(actor, request, kiln, plate);
   const startMs = request.startAt === undefined ? null : Date.parse(request.startAt);
   const context = await contextOf(actor, kiln, startMs);
-  const simulation = simulate({ profile: request.profile, kiln: plate, load, ambientC: request.ambientC });
+  const simulation = simulated({ profile: request.profile, kiln: plate, load, ambientC: request.ambientC });
   const found = estimateOf(simulation, {
     mouldIndex: query.mould ?? null,
     cautions: cautionsOf(simulation, context),
@@ -71,7 +71,7 @@ export async function versionCautions(
 ): Promise<Caution[]> {
   const kiln = await kilnFor(actor, content.kilnId, tx);
   const load = content.load ?? loadSchema.parse({});
-  const simulation = simulate({ profile: content.profile, kiln: plateOf(kiln), load, ambientC: ROOM_C });
+  const simulation = simulated({ profile: content.profile, kiln: plateOf(kiln), load, ambientC: ROOM_C });
   return cautionsOf(simulation, await contextOf(actor, kiln, null, tx));
 }
 
