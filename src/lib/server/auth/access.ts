@@ -127,11 +127,11 @@ export const ACCESS: readonly AccessRule[] = [
   api('/runs/[id]/logs/[logId]/answers', { POST: EVERY_ROLE }),
 ];
 
-const RULES: ReadonlyMap<string, AccessRule> = new Map(ACCESS.map((rule) => [rule.path, rule]));
+const RULES: ReadonlyMap<string, AccessRule> = new Map(ACCESS.map((rule) => [rule.path.toLowerCase(), rule]));
 
-/** The rule of a route as the router matched it; undefined where the table has none. */
+/** The rule of a route as the router matched it (it gives its patterns in small letters); undefined where there is none. */
 export const ruleOf = (routePattern: string): AccessRule | undefined =>
-  RULES.get(routePattern.length > 1 ? routePattern.replace(/\/$/, '') : routePattern);
+  RULES.get(routePattern.length > 1 ? routePattern.replace(/\/$/, '').toLowerCase() : routePattern);
 
 /** What the table says of one request. `unlisted`: nothing is offered there. */
 export function judge(
