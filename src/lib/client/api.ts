@@ -43,7 +43,7 @@ type CallOptions<R extends Route> = {
 export function addressOf(
   path: string,
   params: Readonly<Record<string, string>> = {},
-  query: Readonly<Record<string, unknown>> = {},
+  query: Readonly<Record<string, string | number | boolean | null | undefined>> = {},
 ): string {
   const filled = path.replace(/\{(\w+)\}/g, (_whole, name: string) => {
     const value = params[name];
@@ -81,14 +81,21 @@ export async function call<R extends Route>(route: R, options: CallOptions<R>): 
   if (options.revision !== undefined) headers['if-match'] = `"${options.revision}"`;
   let response: Response;
   try {
-    response = await fetch(addressOf(route.path, options.params, options.query as Record<string, unknown>), {
-      method: route.method,
-      headers,
-      credentials: 'same-origin',
-      ...(options.body === undefined ? {} : { body: JSON.stringify(options.body) }),
-      ...(options.signal ? { signal: options.signal } : {}),
-      ...(options.keepalive ? { keepalive: true } : {}),
-    });
+    response = await fetch(
+      addressOf(
+        route.path,
+        options.params,
+        options.query as Record<string, string | number | boolean | undefined>,
+      ),
+      {
+        method: route.method,
+        headers,
+        credentials: 'same-origin',
+        ...(options.body === undefined ? {} : { body: JSON.stringify(options.body) }),
+        ...(options.signal ? { signal: options.signal } : {}),
+        ...(options.keepalive ? { keepalive: true } : {}),
+      },
+    );
   } catch (cause) {
     if (options.signal?.aborted) throw cause;
     throw new NoAnswer(cause);

@@ -43,14 +43,22 @@ export function Cautions({ cautions, onPoint, onGoTo }: CautionsProps) {
           >
             <p>
               <span className="strip-hidden">{`${WORDS[caution.severity]}: `}</span>
-              <strong>{head}</strong>
+              {segment === null ? (
+                <strong>{head}</strong>
+              ) : (
+                <a
+                  className="caution-link"
+                  href={`#segment-${segment + 1}`}
+                  onClick={(event) => {
+                    event.preventDefault();
+                    onGoTo(segment);
+                  }}
+                >
+                  {head}
+                </a>
+              )}
               {rest} <span className="caution-source">{caution.source}</span>
             </p>
-            {segment === null ? null : (
-              <button type="button" className="caution-link" onClick={() => onGoTo(segment)}>
-                {`Segment ${segment + 1}`}
-              </button>
-            )}
           </li>
         );
       })}

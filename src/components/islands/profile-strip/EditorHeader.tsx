@@ -25,15 +25,18 @@ function Name(props: EditorHeaderProps) {
   return (
     <h1 className="editor-name">
       <span className="strip-hidden">{document.name}</span>
-      <input
+      <textarea
+        rows={1}
         className="page-title"
         aria-label="Name of the profile"
         maxLength={120}
         value={document.name}
-        onChange={(event) => props.onName(event.currentTarget.value)}
+        onChange={(event) => props.onName(event.currentTarget.value.replace(/\n/g, ' '))}
         onBlur={props.onNameDone}
         onKeyDown={(event) => {
-          if (event.key === 'Enter') event.currentTarget.blur();
+          if (event.key !== 'Enter') return;
+          event.preventDefault();
+          event.currentTarget.blur();
         }}
       />
     </h1>

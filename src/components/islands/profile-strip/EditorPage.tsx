@@ -1,13 +1,14 @@
-import { useCallback, useEffect, useMemo, useState } from 'react';
+import { useCallback, useMemo, useState, useSyncExternalStore } from 'react';
 import { useUnits } from '~/lib/client/units';
 import type { Version } from '~/lib/contracts/profiles';
+import { plannedCurve } from '~/lib/profile/planned';
 import { SAFETY_NOTES, safetyNotesFor } from '~/lib/profile/safety';
 import type { Caution } from '~/lib/thermal/estimate-schema';
 import { nextClockHour } from '../strip/clock';
 import { Actions } from './Actions';
 import { Cautions } from './Cautions';
 import { Conflict } from './Conflict';
-import { kilnRampsOf, type ProfileDocument } from './document';
+import { kilnRampsOf } from './document';
 import { EditorHeader, type Panel } from './EditorHeader';
 import { useEstimates } from './estimate-work';
 import { Figures } from './Figures';
@@ -17,7 +18,7 @@ import { KilnPicker } from './KilnPicker';
 import { availableLayers, FIRST_SHOWN, type LayerId } from './layers-shown';
 import { LayerSwitches } from './LayerSwitches';
 import { LoadPanel } from './LoadPanel';
-import { estimateDocument } from './model';
+import { modelOf } from './model';
 import { permissionsFor } from './permissions';
 import { ProfileStrip } from './ProfileStrip';
 import type { ProfileEditorProps } from './props';
@@ -25,27 +26,30 @@ import { Returned, remarksOf } from './Returned';
 import { SaveLine } from './SaveLine';
 import { STATE_NAMES } from './shown';
 import { StartPicker } from './StartPicker';
-import { useEditor, usePlanned } from './useEditor';
+import { useEditor } from './useEditor';
 import { useKeeping } from './useKeeping';
 
 const START_HOUR = 6;
 
 /** The moment the firing is taken to begin: the next morning at six on the studio's clock, until one is chosen. */
 function useStart(zone: string): [number | null, (startMs: number) => void] {
-  const [startMs, setStartMs] = useState<number | null>(null);
-  useEffect(() => setStartMs(nextClockHour(Date.now(), zone, START_HOUR)), [zone]);
-  return [startMs, setStartMs];
+  const isInBrowser = useSyncExternalStore(
+    () => () => undefined,
+    () => true,
+    () => false,
+  );
+  const [startMs, setStartMs] = useState(() => nextClockHour(Date.now(), zone, START_HOUR));
+  return [isInBrowser ? startMs : null, setStartMs];
 }
 
 function useModel(props: ProfileEditorProps, startMs: number | null) {
   const units = useUnits();
   const { kilns, tariffs, thermocouples, ambientC, attendedHours } = props;
   const zone = props.me.studio.timeZone;
-  return useMemo(() => {
-    if (startMs === null) return () => null;
-    const around = { kilns, tariffs, thermocouples, ambientC, attendedHours, startMs, zone, units };
-    return (document: ProfileDocument) => estimateDocument(document, around);
-  }, [kilns, tariffs, thermocouples, ambientC, attendedHours, startMs, zone, units]);
+  return useMemo(
+    () => modelOf({ kilns, tariffs, thermocouples, ambientC, attendedHours, startMs, zone, units }),
+    [kilns, tariffs, thermocouples, ambientC, attendedHours, startMs, zone, units],
+  );
 }
 
 function useLayers(): [ReadonlySet<LayerId>, (id: LayerId) => void] {
@@ -82,17 +86,21 @@ export function EditorPage(props: ProfileEditorProps) {
   const editor = useEditor(first.document, readOnly, limits);
   const { document } = editor;
   const kiln = kilns.find((candidate) => candidate.id === document.kilnId) ?? null;
-  const keeping = useKeeping(document, first, (theirs) => editor.change(theirs));
+  const keeping = useKeeping(document, first, (one, other) => {
+    editor.change(one);
+    editor.change(other);
+  });
+  const theirs = keeping.state.kind === 'conflict' ? (keeping.state.theirs as Theirs) : null;
   const [startMs, setStartMs] = useStart(zone);
   const { now, was } = useEstimates(document, editor.before, useModel(props, startMs));
   const estimate = now?.estimate ?? null;
-  const kilnRampsS = kilnRampsOf(document.profile, estimate);
-  const planned = usePlanned(document.profile, kilnRampsS);
+  const kilnRampsS = useMemo(() => kilnRampsOf(document.profile, estimate), [document.profile, estimate]);
+  const planned = useMemo(() => plannedCurve(document.profile, kilnRampsS), [document.profile, kilnRampsS]);
   const [shown, toggle] = useLayers();
   const [panel, setPanel] = useState<Panel>(null);
   const [pointed, setPointed] = useState<Caution | null>(null);
   const onVersion = (next: Version): void => {
-    keeping.adopt({ ...keeping.kept, version: next });
+    keeping.adoptVersion(next);
     setVersion(next);
   };
   const goTo = (segment: number): void => {
@@ -123,7 +131,7 @@ export function EditorPage(props: ProfileEditorProps) {
         onPanel={setPanel}
         onName={(name) => editor.change({ name }, 'name')}
         onNameDone={() => {
-          if (document.name.trim() === '') editor.change({ name: keeping.kept.document.name }, 'name');
+          if (document.name.trim() === '') editor.change({ name: keeping.keptName }, 'name');
           editor.endStep();
         }}
         figures={
@@ -136,13 +144,13 @@ export function EditorPage(props: ProfileEditorProps) {
           />
         }
       />
-      {keeping.state.kind === 'conflict' ? (
+      {theirs ? (
         <Conflict
           profileId={props.profile.id}
           mine={document}
-          theirs={keeping.state.theirs as Theirs}
+          theirs={theirs}
           kilns={kilns}
-          onChoose={keeping.settle}
+          onChoose={(choice) => keeping.settle(choice, theirs)}
         />
       ) : null}
       <Returned version={version} zone={zone} />

@@ -1,3 +1,17 @@
+function Arrow({ forward }: { readonly forward?: boolean }) {
+  return (
+    <svg width="18" height="18" viewBox="0 0 18 18" aria-hidden="true">
+      <path
+        d={
+          forward
+            ? 'M14.500 7H7a3.500 3.500 0 0 0 0 7h4M11.500 4l3 3l-3 3'
+            : 'M3.500 7H11a3.500 3.500 0 0 1 0 7H7M6.500 4l-3 3l3 3'
+        }
+      />
+    </svg>
+  );
+}
+
 /** Undo and redo as buttons, and what was last removed. */
 export function UndoButtons(props: {
   readonly canUndo: boolean;
@@ -13,21 +27,23 @@ export function UndoButtons(props: {
       </span>
       <button
         type="button"
-        className="btn btn-quiet btn-small"
+        className="undo-button"
         disabled={!props.canUndo}
-        title="Ctrl Z"
+        aria-label="Undo"
+        title="Undo, Ctrl Z"
         onClick={props.onUndo}
       >
-        Undo
+        <Arrow />
       </button>
       <button
         type="button"
-        className="btn btn-quiet btn-small"
+        className="undo-button"
         disabled={!props.canRedo}
-        title="Ctrl Shift Z"
+        aria-label="Redo"
+        title="Redo, Ctrl Shift Z"
         onClick={props.onRedo}
       >
-        Redo
+        <Arrow forward />
       </button>
     </div>
   );

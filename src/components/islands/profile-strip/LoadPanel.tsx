@@ -50,7 +50,7 @@ function FurnitureRow(props: {
   const table = findMaterial('furniture', item.material);
   return (
     <fieldset className="load-item">
-      <legend className="strip-hidden">{props.name}</legend>
+      <legend>{table?.name ?? item.material}</legend>
       <div className="load-grid">
         <Choice
           label="Material"
@@ -75,10 +75,6 @@ function FurnitureRow(props: {
           onCommit={(thicknessM) => onChange({ ...item, thicknessM }, 'thickness')}
           onClear={() => onChange({ ...item, thicknessM: null })}
         />
-        <button type="button" className="btn btn-quiet btn-small load-remove" onClick={props.onRemove}>
-          Remove
-          <span className="strip-hidden">{` ${props.name}`}</span>
-        </button>
       </div>
       {table ? (
         <TableNumbers
@@ -88,6 +84,10 @@ function FurnitureRow(props: {
           onChange={(overrides) => onChange({ ...item, overrides })}
         />
       ) : null}
+      <button type="button" className="btn btn-quiet btn-small load-remove" onClick={props.onRemove}>
+        Remove
+        <span className="strip-hidden">{` ${props.name}`}</span>
+      </button>
     </fieldset>
   );
 }
@@ -189,19 +189,16 @@ export function LoadPanel({ load, furnaces, onChange }: LoadPanelProps) {
       <Moulds load={full} onChange={onChange} />
       <FurnitureList load={full} onChange={onChange} />
       <section className="load-section">
-        <h3>Pour</h3>
+        <h3>Pour, and going in</h3>
         <PourFields
           pour={full.pour}
           furnaces={furnaces}
           onChange={(pour, key) => onChange({ ...full, pour }, key && `pour.${key}`)}
         />
-      </section>
-      <section className="load-section">
-        <h3>Going in</h3>
         <div className="load-grid">
           <QuantityInput
             boxed
-            label="Load at"
+            label="Load goes in at"
             text={full.startC === null ? '' : inScale(full.startC)}
             placeholder="as the kiln"
             parse={between((typed) => parseTemperature(typed, units.temperature), -20, 1400, inScale)}

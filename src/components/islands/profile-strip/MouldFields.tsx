@@ -224,22 +224,24 @@ export function MouldFields({ mould, put }: { readonly mould: Mould; readonly pu
         />
         {mould.pattern ? <PatternFields pattern={mould.pattern} put={putPattern} /> : null}
       </div>
-      {table ? (
-        <TableNumbers
-          of={mouldName(mould.material)}
-          properties={table.properties}
-          overrides={mould.overrides}
-          onChange={(overrides) => put({ overrides })}
-        />
-      ) : null}
-      {mould.pattern && patternTable ? (
-        <TableNumbers
-          of={patternName(mould.pattern.material)}
-          properties={patternTable.properties}
-          overrides={mould.pattern.overrides}
-          onChange={(overrides) => putPattern({ overrides })}
-        />
-      ) : null}
+      <div className="load-numbers">
+        {table ? (
+          <TableNumbers
+            of={mouldName(mould.material)}
+            properties={table.properties}
+            overrides={mould.overrides}
+            onChange={(overrides) => put({ overrides })}
+          />
+        ) : null}
+        {mould.pattern && patternTable ? (
+          <TableNumbers
+            of={patternName(mould.pattern.material)}
+            properties={patternTable.properties}
+            overrides={mould.pattern.overrides}
+            onChange={(overrides) => putPattern({ overrides })}
+          />
+        ) : null}
+      </div>
     </>
   );
 }

@@ -80,8 +80,13 @@ function Tools(props: CardProps) {
   const { index } = props;
   return (
     <div className="card-tools">
-      <button type="button" className="btn btn-quiet btn-small" onClick={() => props.onAdd(index)}>
-        Add after
+      <button
+        type="button"
+        className="btn btn-quiet btn-small"
+        aria-label={`Add a segment after segment ${index + 1}`}
+        onClick={() => props.onAdd(index)}
+      >
+        Add
       </button>
       <span className="card-tools-right">
         <button
@@ -179,6 +184,7 @@ export const SegmentCard = memo(function SegmentCard(props: CardProps) {
   };
   return (
     <div
+      id={`segment-${index + 1}`}
       className="segment-card"
       role="group"
       aria-label={cardName(props)}
@@ -200,13 +206,15 @@ export function CardSummary(props: CardProps & { readonly onOpen: (index: number
   return (
     <button
       type="button"
+      id={`segment-${index + 1}`}
       className="segment-summary"
       data-card={index}
       data-selected={props.selected || undefined}
       data-hot={props.foreseen?.hot || undefined}
       style={props.place}
       aria-label={`${cardName(props)}, ${props.readOnly ? 'show' : 'change'}`}
-      onClick={() => {
+      onClick={(event) => {
+        event.currentTarget.scrollIntoView({ block: 'start' });
         props.onSelect(index);
         props.onOpen(index);
       }}

@@ -148,6 +148,7 @@ export function InstructionField({ segment, edits, index }: SegmentFieldProps) {
   return (
     <textarea
       className="card-instruction"
+      data-empty={segment.instruction === '' || undefined}
       aria-label={`Instruction at segment ${index + 1}`}
       data-field="instruction"
       rows={1}

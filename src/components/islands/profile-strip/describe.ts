@@ -7,8 +7,11 @@ const counted = (count: number, one: string, many: string): string => `${count} 
 const lowerFirst = (text: string): string =>
   /^[A-Z][a-z]/.test(text) ? text.charAt(0).toLowerCase() + text.slice(1) : text;
 
-export const mouldName = (id: string): string => lowerFirst(findMaterial('moulds', id)?.name ?? id);
-export const patternName = (id: string): string => lowerFirst(findMaterial('patterns', id)?.name ?? id);
+/** `PLA, printed` in a sentence: `printed PLA`. */
+const inSentence = (name: string): string => lowerFirst(name).replace(/^([^,]+), ([^,]+)$/, '$2 $1');
+
+export const mouldName = (id: string): string => inSentence(findMaterial('moulds', id)?.name ?? id);
+export const patternName = (id: string): string => inSentence(findMaterial('patterns', id)?.name ?? id);
 
 function sizeOf(mould: Mould, units: UnitPreferences): string {
   if (mould.form === 'shell')
@@ -29,7 +32,7 @@ export function mouldsText(load: Load | null, units: UnitPreferences): string {
   if (alike) {
     const noun =
       first.form === 'shell' ? counted(total, 'shell', 'shells') : counted(total, 'flask', 'flasks');
-    return `${noun}, ${sizeOf(first, units)}${mouldName(first.material)}`;
+    return `${noun}, ${sizeOf(first, units)}${mouldName(first.material).replace(/ shell$/, '')}`;
   }
   return [
     shells > 0 ? counted(shells, 'shell', 'shells') : '',

@@ -1,4 +1,4 @@
-import { useEffect, useMemo, useRef, useState } from 'react';
+import { useEffect, useMemo, useState } from 'react';
 import { flushSync } from 'react-dom';
 import type { Estimate } from '~/lib/thermal/estimate-schema';
 import type { ProfileDocument } from './document';
@@ -8,6 +8,18 @@ export type EstimateOf = (document: ProfileDocument) => Estimate | null;
 export interface Estimated {
   readonly document: ProfileDocument;
   readonly estimate: Estimate | null;
+}
+
+/** The same model, each document computed once. */
+function remembering(estimateOf: EstimateOf): EstimateOf {
+  const byDocument = new WeakMap<ProfileDocument, { readonly estimate: Estimate | null }>();
+  return (document) => {
+    const found = byDocument.get(document);
+    if (found) return found.estimate;
+    const estimate = estimateOf(document);
+    byDocument.set(document, { estimate });
+    return estimate;
+  };
 }
 
 /**
@@ -21,22 +33,12 @@ export function useEstimates(
   before: ProfileDocument | null,
   estimateOf: EstimateOf,
 ) {
-  const known = useMemo(() => {
-    const byDocument = new WeakMap<ProfileDocument, { readonly estimate: Estimate | null }>();
-    return (of: ProfileDocument): Estimate | null => {
-      const found = byDocument.get(of);
-      if (found) return found.estimate;
-      const estimate = estimateOf(of);
-      byDocument.set(of, { estimate });
-      return estimate;
-    };
-  }, [estimateOf]);
+  const known = useMemo(() => remembering(estimateOf), [estimateOf]);
   const [now, setNow] = useState<Estimated | null>(null);
   const [was, setWas] = useState<Estimated | null>(null);
-  const frame = useRef(0);
 
   useEffect(() => {
-    frame.current = requestAnimationFrame(() => {
+    const frame = requestAnimationFrame(() => {
       const estimate = known(document);
       const earlier = before === null ? null : { document: before, estimate: known(before) };
       flushSync(() => {
@@ -44,7 +46,7 @@ export function useEstimates(
         setWas(earlier);
       });
     });
-    return () => cancelAnimationFrame(frame.current);
+    return () => cancelAnimationFrame(frame);
   }, [document, before, known]);
 
   return { now, was };

@@ -1,7 +1,7 @@
 import { ApiProblem, call, NoAnswer } from '~/lib/client/api';
 import { profileRoutes, versionSchema, type Version } from '~/lib/contracts/profiles';
-import { SaveRejection } from './autosave';
-import { sameContent, type ProfileDocument } from './document';
+import { Autosave, SaveRejection } from './autosave';
+import { sameContent, sameDocument, type ProfileDocument } from './document';
 
 /** Where the document is kept on the server, and at which revisions. */
 export interface Kept {
@@ -97,4 +97,28 @@ async function rejectionOf(error: unknown, kept: Kept): Promise<SaveRejection> {
   if (error.status >= 500 || error.status === 429)
     return new SaveRejection({ kind: 'away', message: error.message });
   return new SaveRejection({ kind: 'refused', message: error.message });
+}
+
+/** A document on its way to the server: where it is kept there, and what of it is not kept yet. */
+export class Keeper {
+  readonly autosave: Autosave<ProfileDocument>;
+
+  constructor(public kept: Kept) {
+    this.autosave = new Autosave(kept.document, {
+      isSame: sameDocument,
+      now: Date.now,
+      save: async (sent) => this.adopt(await keep(this.kept, sent)),
+    });
+  }
+
+  /** The version was changed by a call of its own: submitted, approved. */
+  adopt(kept: Kept): void {
+    this.kept = kept;
+  }
+
+  /** Two differ: the chosen one stands, and what is on the server is known again. */
+  settle(theirs: Theirs, current: ProfileDocument): void {
+    this.adopt({ ...theirs, profileId: this.kept.profileId });
+    this.autosave.settle(theirs.document, current);
+  }
 }

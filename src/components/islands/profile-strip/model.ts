@@ -15,7 +15,8 @@ export interface Surroundings {
   readonly tariffs: readonly Tariff[];
   readonly thermocouples: readonly Thermocouple[];
   readonly ambientC: number;
-  readonly startMs: number;
+  /** Null before the page is in a browser: nothing is computed then. */
+  readonly startMs: number | null;
   readonly zone: string;
   readonly units: UnitPreferences;
   readonly attendedHours: { readonly fromMinute: number; readonly toMinute: number } | null;
@@ -28,7 +29,10 @@ const EMPTY_LOAD = loadSchema.parse({});
  *
  * @returns null where no kiln is chosen or the plan is longer than a profile may be
  */
-export function estimateDocument(document: ProfileDocument, around: Surroundings): Estimate | null {
+function estimateDocument(
+  document: ProfileDocument,
+  around: Surroundings & { readonly startMs: number },
+): Estimate | null {
   const kiln = around.kilns.find((candidate) => candidate.id === document.kilnId);
   if (!kiln || issuesOf(document.profile).length > 0) return null;
   const { profile } = document;
@@ -51,6 +55,13 @@ export function estimateDocument(document: ProfileDocument, around: Surroundings
     ...co2Only(co2Of(fuel, simulation.energy.inKWh, plan)),
     cost: plan ? costOf(plan, simulation, around.startMs, offsetMinutesAt).cost : null,
   };
+}
+
+/** The model with what surrounds it. */
+export function modelOf(around: Surroundings): (document: ProfileDocument) => Estimate | null {
+  const { startMs } = around;
+  if (startMs === null) return () => null;
+  return (document) => estimateDocument(document, { ...around, startMs });
 }
 
 const co2Only = ({ co2Kg }: { readonly co2Kg: number }): { co2Kg: number } => ({ co2Kg });

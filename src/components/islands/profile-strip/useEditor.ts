@@ -1,7 +1,6 @@
-import { useCallback, useEffect, useMemo, useReducer, useRef, useState } from 'react';
+import { useCallback, useEffect, useLayoutEffect, useMemo, useReducer, useRef, useState } from 'react';
 import { insertSegment, moveSegment, removeSegment } from '~/lib/profile/edit';
 import { canRedo, canUndo } from '~/lib/profile/history';
-import { plannedCurve } from '~/lib/profile/planned';
 import type { Profile } from '~/lib/profile/schema';
 import { beginEditing, editing, type ProfileDocument } from './document';
 import { STAGE_NAMES } from './shown';
@@ -31,7 +30,9 @@ export function useEditor(
   const [notice, setNotice] = useState<string | null>(null);
   const { present } = state.history;
   const now = useRef(present);
-  now.current = present;
+  useLayoutEffect(() => {
+    now.current = present;
+  }, [present]);
   const kilnMaxC = limits(present.kilnId);
 
   const change = useCallback(
@@ -134,13 +135,4 @@ export function useEditor(
     }),
     [present, state, notice, kilnMaxC, change, changeProfile, select, endStep, add, remove, move, undo, redo],
   );
-}
-
-/** The planned curve, kept from one drawing to the next while nothing it depends on changed. */
-export function usePlanned(profile: Profile, kilnRampsS: readonly (number | null)[]) {
-  const key = kilnRampsS.join();
-  const ramps = useRef(kilnRampsS);
-  if (ramps.current.join() !== key) ramps.current = kilnRampsS;
-  const steady = ramps.current;
-  return useMemo(() => plannedCurve(profile, steady), [profile, steady]);
 }

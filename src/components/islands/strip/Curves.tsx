@@ -60,7 +60,9 @@ export function Curves({ scales, layers }: CurvesProps) {
   const plot = useRef<uPlot | null>(null);
   const palette = useRef<Palette | null>(null);
   const current = useRef({ scales, layers });
-  current.current = { scales, layers };
+  useLayoutEffect(() => {
+    current.current = { scales, layers };
+  }, [scales, layers]);
   const shape = shapeOf(scales, layers);
   const paletteVersion = usePaletteVersion();
 

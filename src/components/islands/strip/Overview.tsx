@@ -32,7 +32,7 @@ export function Overview(props: OverviewProps) {
     const rect = (event.currentTarget.ownerSVGElement ?? event.currentTarget).getBoundingClientRect();
     return scales.at(event.clientX - rect.left, 0).timeS;
   };
-  const grab = (part: Grip['part']) => (event: PointerEvent<SVGElement>) => {
+  const grab = (part: Grip['part'], event: PointerEvent<SVGElement>): void => {
     event.stopPropagation();
     event.currentTarget.setPointerCapture(event.pointerId);
     grip.current = { part, grabbedS: momentOf(event), window: shown };
@@ -105,7 +105,7 @@ export function Overview(props: OverviewProps) {
         width={Math.max(2, to - from)}
         height={heightPx - 4}
         onKeyDown={onKeyDown}
-        onPointerDown={grab('whole')}
+        onPointerDown={(event) => grab('whole', event)}
         {...held}
       />
       {(['from', 'to'] as const).map((part) => (
@@ -117,7 +117,7 @@ export function Overview(props: OverviewProps) {
           y="2"
           width="24"
           height={heightPx - 4}
-          onPointerDown={grab(part)}
+          onPointerDown={(event) => grab(part, event)}
           {...held}
         />
       ))}

@@ -7,32 +7,34 @@ export interface StripTableContent {
 /** The chart's figures as a table, for those who do not see it. */
 export function StripTable({ content }: { readonly content: StripTableContent }) {
   return (
-    <table className="strip-hidden">
-      <caption>{content.caption}</caption>
-      <thead>
-        <tr>
-          {content.columns.map((column) => (
-            <th key={column} scope="col">
-              {column}
-            </th>
-          ))}
-        </tr>
-      </thead>
-      <tbody>
-        {content.rows.map((row, index) => (
-          <tr key={`${index} ${row[0] ?? ''}`}>
-            {row.map((cell, at) =>
-              at === 0 ? (
-                <th key={at} scope="row">
-                  {cell}
-                </th>
-              ) : (
-                <td key={at}>{cell}</td>
-              ),
-            )}
+    <div className="strip-hidden">
+      <table>
+        <caption>{content.caption}</caption>
+        <thead>
+          <tr>
+            {content.columns.map((column) => (
+              <th key={column} scope="col">
+                {column}
+              </th>
+            ))}
           </tr>
-        ))}
-      </tbody>
-    </table>
+        </thead>
+        <tbody>
+          {content.rows.map((row, index) => (
+            <tr key={`${index} ${row[0] ?? ''}`}>
+              {row.map((cell, at) =>
+                at === 0 ? (
+                  <th key={at} scope="row">
+                    {cell}
+                  </th>
+                ) : (
+                  <td key={at}>{cell}</td>
+                ),
+              )}
+            </tr>
+          ))}
+        </tbody>
+      </table>
+    </div>
   );
 }

@@ -1,4 +1,4 @@
-import { useCallback, useEffect, useMemo, useState, type KeyboardEvent } from 'react';
+import { useCallback, useMemo, useState, type KeyboardEvent } from 'react';
 import { panned, within, zoomed, type TimeWindow } from './window';
 
 export interface TimeWindowControl {
@@ -19,9 +19,7 @@ export function useTimeWindow(whole: TimeWindow): TimeWindowControl {
   const { fromS, toS } = whole;
   const all = useMemo(() => ({ fromS, toS }), [fromS, toS]);
   const shown = useMemo(() => (wished ? within(wished, all) : all), [wished, all]);
-  useEffect(() => {
-    if (wished && shown.toS - shown.fromS >= all.toS - all.fromS) setWished(null);
-  }, [wished, shown, all]);
+  const isZoomed = shown.toS - shown.fromS < all.toS - all.fromS;
   const zoom = useCallback(
     (factor: number, aboutS = (shown.fromS + shown.toS) / 2) => setWished(zoomed(shown, all, factor, aboutS)),
     [shown, all],
@@ -34,13 +32,13 @@ export function useTimeWindow(whole: TimeWindow): TimeWindowControl {
       if (event.key === '+' || event.key === '=') zoom(1.5);
       else if (event.key === '-') zoom(1 / 1.5);
       else if (event.key === '0') reset();
-      else if (event.key === 'ArrowLeft' && wished) pan(-0.2);
-      else if (event.key === 'ArrowRight' && wished) pan(0.2);
+      else if (event.key === 'ArrowLeft' && isZoomed) pan(-0.2);
+      else if (event.key === 'ArrowRight' && isZoomed) pan(0.2);
       else return false;
       event.preventDefault();
       return true;
     },
-    [zoom, pan, reset, wished],
+    [zoom, pan, reset, isZoomed],
   );
-  return { shown, whole: all, isZoomed: wished !== null, show: setWished, zoom, pan, reset, key };
+  return { shown, whole: all, isZoomed, show: setWished, zoom, pan, reset, key };
 }
