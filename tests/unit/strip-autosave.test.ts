@@ -25,7 +25,7 @@ describe('a draft is kept as it is changed', () => {
 
   const begin = () => {
     const server = serverAnswering();
-    const autosave = new Autosave('first', { save: server.save, isSame, now: Date.now, restMs: 800 });
+    const autosave = new Autosave<string>('first', { save: server.save, isSame, now: Date.now, restMs: 800 });
     return { server, autosave };
   };
 
