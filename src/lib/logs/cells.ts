@@ -6,6 +6,8 @@ import { readStamp } from './stamp';
 export interface HeadRow {
   cells: string[];
   line: number;
+  /** Whether a line end closes it; the last line without one may be cut off. */
+  terminated: boolean;
 }
 
 export type CellKind = 'empty' | 'number' | 'time' | 'marker' | 'text';
@@ -24,7 +26,7 @@ export function headRows(text: string, delimiter: string, whole: boolean): HeadR
   const splitter = new RowSplitter(delimiter, (row) => {
     const cells: string[] = [];
     for (let i = 0; i < row.count && i < row.starts.length; i++) cells.push(bare(cellOf(row, i)));
-    if (cells.some((cell) => cell !== '')) rows.push({ cells, line: row.line });
+    if (cells.some((cell) => cell !== '')) rows.push({ cells, line: row.line, terminated: row.terminated });
   });
   splitter.push(text);
   if (whole) splitter.end();

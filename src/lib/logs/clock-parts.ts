@@ -18,7 +18,7 @@ const COMPACT_CLOCK = /^(\d{2})(\d{2})(\d{2})?(?!\d)/;
 /** AM or PM behind a clock. */
 export const MERIDIEM = /^\s*([ap])\.?\s?m\.?(?![a-z])/i;
 /** A zone or an offset behind a clock. */
-export const OFFSET = /^\s*(?:(?:UTC|GMT)?([+-−])(\d{1,2}):?(\d{2})?|(Z|[A-Z]{3,4}))(?![A-Za-z0-9])/;
+export const OFFSET = /^\s*(?:(?:UTC|GMT)?([+\-−])(\d{1,2}):?(\d{2})?|(Z|[A-Z]{3,4}))(?![A-Za-z0-9])/;
 
 /** A clock at the beginning of a text. */
 export interface ClockFound {
@@ -87,7 +87,7 @@ export function readRest(text: string, clock: ClockFound): ClockRest | null {
     offsetMin = zone[4]
       ? (OFFSETS_MIN[zone[4]] ?? NaN)
       : (zone[1] === '+' ? 1 : -1) * (Number(zone[2]) * 60 + Number(zone[3] ?? 0));
-    if (Number.isNaN(offsetMin)) return null;
+    if (!(Math.abs(offsetMin) <= 15 * 60)) return null;
   }
   const { shape } = clock;
   const hourLetter = meridiem ? 'h' : 'H';

@@ -41,7 +41,8 @@ const SAMPLED_ROWS = 4000;
 
 /** Looks at the first rows of readings column by column. */
 export function examineColumns(layout: Layout): Columns {
-  const rows = sampleOf(layout.dataRows);
+  const sound = layout.dataRows.filter(({ terminated }) => terminated);
+  const rows = sampleOf(sound.length > 0 ? sound : layout.dataRows);
   const { decimal, known } = decimalMark(rows, layout.delimiter);
   const names = columnNames(layout);
   const columns = names.map((name, index) => examineColumn(index, name, layout, rows, decimal));

@@ -1,4 +1,4 @@
-import { headRows, isDataLike, shapeOf, type HeadRow, type RowShape } from './cells';
+import { cellKind, headRows, isDataLike, shapeOf, type CellKind, type HeadRow, type RowShape } from './cells';
 import { unitCell } from './header-words';
 import { DELIMITERS, type Delimiter } from './schema';
 
@@ -27,6 +27,7 @@ interface Examined {
 
 const SCORED_CHARS = 65_536;
 const SCORED_ROWS = 400;
+const KIND_ROWS = 100;
 
 /** Finds the table in the first text of a file, or null if there is none. */
 export function findLayout(text: string, whole: boolean): Layout | null {
@@ -99,24 +100,28 @@ function usualWidth(rows: Examined[]): number {
   return width;
 }
 
+/** Rows of readings under a later header, by those under the first, that make the first a table of its own. */
+const MUCH_MORE = 4;
+
 /**
- * Index of the header: a row of words as wide as the table, right above rows of readings (a units row may lie between), with the
- * most of them below it before another such row. A repetition of itself further down does not end them.
+ * Index of the header: a row of words as wide as the table, right above rows of readings (a units row may lie between), the first
+ * such, unless many more rows follow a later one. A repetition of itself further down does not end them.
  */
 function findHeader(rows: Examined[], width: number): number | null {
+  const kinds = columnKinds(rows, width);
   let best: number | null = null;
   let bestCount = 0;
   let count = 0;
   let candidate: number | null = null;
   const settle = (): void => {
-    if (candidate !== null && count > bestCount) {
+    if (candidate !== null && count > MUCH_MORE * bestCount) {
       best = candidate;
       bestCount = count;
     }
   };
   rows.forEach((examined, i) => {
     const unitsOfCandidate = candidate === i - 1 && isUnitsRow(examined);
-    if (!unitsOfCandidate && isHeaderLike(examined, width) && followedByData(rows, i, width)) {
+    if (!unitsOfCandidate && isHeaderLike(examined, width, kinds) && followedByData(rows, i, width)) {
       const same = candidate !== null && rows[candidate]?.row.cells.join() === examined.row.cells.join();
       if (!same) {
         settle();
@@ -129,11 +134,28 @@ function findHeader(rows: Examined[], width: number): number | null {
   return best;
 }
 
-function isHeaderLike({ shape, row, data }: Examined, width: number): boolean {
-  if (data || shape.times > 0 || Math.abs(shape.cells - width) > 1) return false;
-  const filled = row.cells.filter((cell) => cell !== '').length;
-  if (shape.cells !== width && filled < width - 1) return false;
-  return shape.texts > 0 && shape.texts >= shape.numbers && filled * 2 >= width;
+/**
+ * A row that has a name, and no number or time, in the column that tells the time (or the first that holds numbers), and some name in
+ * every other column of numbers. A first cell may be without.
+ */
+function isHeaderLike({ shape, row, data }: Examined, width: number, kinds: (CellKind | null)[]): boolean {
+  if (data || shape.times > 0 || shape.texts === 0 || Math.abs(shape.cells - width) > 1) return false;
+  const times = kinds.indexOf('time');
+  const leading = times >= 0 ? times : kinds.indexOf('number');
+  const nameless = kinds.some((kind, i) => kind !== null && i > 0 && (row.cells[i] ?? '') === '');
+  const first = row.cells[leading] ?? '';
+  return !nameless && (first === '' ? leading === 0 : cellKind(first) !== 'number');
+}
+
+/** What most rows of readings hold in each column: numbers or times; null for words and columns that are mostly empty. */
+function columnKinds(rows: Examined[], width: number): (CellKind | null)[] {
+  const sample = rows.filter(({ data, shape }) => data && shape.cells === width).slice(0, KIND_ROWS);
+  return Array.from({ length: width }, (_, i) => {
+    const kinds = sample.map(({ row }) => cellKind(row.cells[i] ?? ''));
+    const most = (kind: CellKind): boolean =>
+      kinds.filter((found) => found === kind).length * 2 > kinds.length;
+    return most('time') ? 'time' : most('number') ? 'number' : null;
+  });
 }
 
 function followedByData(rows: Examined[], at: number, width: number): boolean {

@@ -2,7 +2,7 @@ import type { Column } from './columns';
 import { bare } from './cells';
 import type { Layout } from './layout';
 import { Markers } from './markers';
-import { looseNumber, plainNumber, writtenDecimals } from './numbers';
+import { isMarker, looseNumber, plainNumber, writtenDecimals } from './numbers';
 import { emptyBlock, setCode, type RawBlock } from './raw-block';
 import type { Rejects } from './rejects';
 import { cellOf, type RowView } from './splitter';
@@ -174,7 +174,7 @@ export class RowReader {
     if (channel < 0) return this.options.timeColumns.includes(lastCell) && row.count > 1;
     const column = this.options.channels[channel];
     const value = block.values[channel]?.[at] ?? NaN;
-    if (Number.isNaN(value)) return text !== '' && !column?.spokenMarkers;
+    if (Number.isNaN(value)) return text === '' || /^[+-]$/.test(text) || !isMarker(text);
     const decimals = writtenDecimals(text, this.decimal);
     if (!column || decimals < 0) return decimals < 0 && /[.,+-]$/.test(text);
     if (column.minDecimals === column.maxDecimals && column.maxDecimals > 0)

@@ -1,12 +1,20 @@
 const HOUR_MS = 3600_000;
 const SEARCH_MS = 40 * 24 * HOUR_MS;
 
-/** Offsets of one IANA zone from UTC, kept for the stretch around the last question, so that asking row by row is cheap. */
+const MOST_STRETCHES = 8;
+
+/** A time over which a zone's offset stays the same. */
+interface Stretch {
+  fromMs: number;
+  toMs: number;
+  offsetMs: number;
+}
+
+/** Offsets of one IANA zone from UTC, kept for the stretches asked about, so that asking row by row is cheap. */
 export class ZoneOffsets {
   private readonly format: Intl.DateTimeFormat;
-  private fromMs = Infinity;
-  private toMs = -Infinity;
-  private offsetMs = 0;
+  private stretches: Stretch[] = [];
+  private last: Stretch = { fromMs: Infinity, toMs: -Infinity, offsetMs: 0 };
 
   constructor(readonly zone: string) {
     this.format = new Intl.DateTimeFormat('en-US', {
@@ -24,16 +32,13 @@ export class ZoneOffsets {
 
   /** Milliseconds by which local time is ahead of UTC at an instant. */
   at(utcMs: number): number {
-    if (utcMs >= this.fromMs && utcMs < this.toMs) return this.offsetMs;
-    this.offsetMs = this.compute(utcMs);
-    this.fromMs = this.edge(utcMs, -1);
-    this.toMs = this.edge(utcMs, 1);
-    return this.offsetMs;
+    return this.stretchAt(utcMs).offsetMs;
   }
 
-  /** Whether local times within a day and a half of this one all have one and the same offset; if so it is `at` it. */
-  steadyAround(localMs: number): boolean {
-    return localMs - 36 * HOUR_MS >= this.fromMs && localMs + 36 * HOUR_MS < this.toMs;
+  /** The offset of all local times within a day and a half of this one, or NaN where it changes within them. */
+  steadyAround(localMs: number): number {
+    const { fromMs, toMs, offsetMs } = this.stretchAt(localMs);
+    return localMs - 36 * HOUR_MS >= fromMs && localMs + 36 * HOUR_MS < toMs ? offsetMs : NaN;
   }
 
   /** The offsets under which a local time exists: one, two in the hour that comes twice, none in the hour that is skipped. */
@@ -47,6 +52,18 @@ export class ZoneOffsets {
   /** The offset before the change that is nearest to a local time. */
   offsetBefore(localMs: number): number {
     return this.at(localMs - 26 * HOUR_MS);
+  }
+
+  private stretchAt(utcMs: number): Stretch {
+    if (utcMs >= this.last.fromMs && utcMs < this.last.toMs) return this.last;
+    let found = this.stretches.find(({ fromMs, toMs }) => utcMs >= fromMs && utcMs < toMs);
+    if (!found) {
+      const offsetMs = this.compute(utcMs);
+      found = { fromMs: this.edge(utcMs, -1, offsetMs), toMs: this.edge(utcMs, 1, offsetMs), offsetMs };
+      this.stretches = [found, ...this.stretches.slice(0, MOST_STRETCHES - 1)];
+    }
+    this.last = found;
+    return found;
   }
 
   private compute(utcMs: number): number {
@@ -65,19 +82,19 @@ export class ZoneOffsets {
   }
 
   /** The nearest change of offset before (excluded) or after (included) an instant, at most 40 days away, to the second. */
-  private edge(utcMs: number, direction: -1 | 1): number {
+  private edge(utcMs: number, direction: -1 | 1, offsetMs: number): number {
     let near = utcMs;
     let far = utcMs;
     for (let reach = 12 * HOUR_MS; reach <= SEARCH_MS; reach *= 2) {
       far = utcMs + direction * Math.min(reach, SEARCH_MS);
-      if (this.compute(far) !== this.offsetMs) break;
+      if (this.compute(far) !== offsetMs) break;
       near = far;
     }
     if (near === far) return far;
     while (Math.abs(far - near) > 1000) {
       const middle = Math.floor((near + far) / 2000) * 1000;
       if (middle === near || middle === far) break;
-      if (this.compute(middle) === this.offsetMs) near = middle;
+      if (this.compute(middle) === offsetMs) near = middle;
       else far = middle;
     }
     return direction === 1 ? far : near;
@@ -113,7 +130,8 @@ export class LocalClock {
   }
 
   private choose(localMs: number): number {
-    if (this.offsets.steadyAround(localMs)) return this.offsets.at(localMs);
+    const steady = this.offsets.steadyAround(localMs);
+    if (!Number.isNaN(steady)) return steady;
     const possible = this.offsets.offsetsOf(localMs);
     if (Number.isNaN(this.previousLocalMs)) return this.chooseFirst(localMs, possible);
     const stepMs = localMs - this.previousLocalMs;
