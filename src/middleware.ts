@@ -86,9 +86,13 @@ function refuse(context: APIContext): Response | undefined {
 }
 
 /** A failure as problem details for a program, as a page for a person. */
-function fail(context: APIContext, error: HoldfastError): Response | Promise<Response> {
+async function fail(context: APIContext, error: HoldfastError): Promise<Response> {
   if (isApi(context)) return problemResponse(error);
   const [status, title] = PROBLEMS[error.code];
   context.locals.problem = { status, title, detail: error.message };
-  return context.rewrite(status >= 500 ? '/500' : '/404');
+  const page = await context.rewrite(status >= 500 ? '/500' : '/404');
+  // The framework gives these two pages their own status, whatever the failure was.
+  const headers = new Headers(page.headers);
+  headers.delete('x-astro-reroute');
+  return new Response(page.body, { status, headers });
 }

@@ -231,8 +231,10 @@ describe('pages', () => {
 
   it('that a role may not see are 403', async () => {
     const student = await app.as('student');
-    for (const path of ['/kilns/new', '/tariffs', '/classes', '/handouts/new'])
-      await student.get(path).expect(403);
+    for (const path of ['/kilns/new', '/tariffs', '/classes', '/handouts/new']) {
+      const { status } = await student.get(path);
+      expect({ path, status }).toEqual({ path, status: 403 });
+    }
   });
 
   it('carry a policy against foreign scripts and frames, and tell no other site where they are', async () => {
