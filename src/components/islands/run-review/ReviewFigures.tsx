@@ -27,7 +27,13 @@ export function ReviewFigures({ figures }: { readonly figures: Review['figures']
       {figures.delayS === null ? null : (
         <Figure
           quantity={{ number: durationText(Math.abs(figures.delayS)), unit: '' }}
-          note={figures.delayS >= 0 ? 'longer than planned' : 'shorter than planned'}
+          note={
+            Math.abs(figures.delayS) < 60
+              ? 'from plan in length'
+              : figures.delayS > 0
+                ? 'longer than planned'
+                : 'shorter than planned'
+          }
         />
       )}
       {heatWorkH === null ? null : (

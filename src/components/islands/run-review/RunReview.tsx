@@ -74,7 +74,7 @@ function ReviewDesk(props: RunReviewProps) {
   return (
     <div className="run-review">
       <div className="review-head">
-        <p className="review-verdict">{props.review.verdict}.</p>
+        <p className="review-verdict">{props.review.verdict.replace(/\.*$/, '.')}</p>
         <ReviewFigures figures={props.review.figures} />
       </div>
       <ReviewStrip

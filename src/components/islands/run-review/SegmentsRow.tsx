@@ -27,10 +27,10 @@ export function SegmentsRow({
         const off = went !== undefined && went.text !== 'as planned' && !went.text.startsWith('as planned');
         return (
           <li key={index}>
-            <h3>
+            <h2 className="segments-name">
               {STAGE_NAMES[segment.stage]}{' '}
               <span className="num">{formatTemperature(segment.toC, temperature)}</span>
-            </h3>
+            </h2>
             {went ? (
               <>
                 <p>
@@ -40,7 +40,7 @@ export function SegmentsRow({
                   <span className="hint">of {planned}</span>
                 </p>
                 <p>
-                  <span className="num">{minutes(went.inBandS)}</span>{' '}
+                  <span className="num">{minutes(Math.min(went.inBandS, went.holdS))}</span>{' '}
                   <span className="hint">
                     min of {minutes(went.plannedHoldS)} in band
                     {went.arrivedS === null

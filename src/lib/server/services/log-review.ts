@@ -72,7 +72,7 @@ function reviewChannels(report: StoredReport, series: LogSeries): ReviewChannel[
   const celsius = toCelsius(report.channels, series.values);
   return report.channels.map((channel, index) => ({
     id: channel.id,
-    name: channel.name,
+    name: spokenName(channel.name),
     role: channel.role,
     quantity: channel.quantity === 'emf' ? 'temperature' : channel.quantity,
     timeMs: series.timeMs,
@@ -80,6 +80,12 @@ function reviewChannels(report: StoredReport, series: LogSeries): ReviewChannel[
     openIndexes: series.open[index] ?? [],
     rangeC: sensorRangeC(channel.thermocouple),
   }));
+}
+
+/** A channel as a sentence names it: `chamber °C` is `the chamber thermocouple`. */
+function spokenName(name: string): string {
+  const plain = name.replace(/\s*[([]?\s*(?:°\s*[CFK]?|[CFK]|%|kW|W|mV)\s*[)\]]?\s*$/i, '').trim();
+  return `the ${plain || name} thermocouple`;
 }
 
 function storedReview(
