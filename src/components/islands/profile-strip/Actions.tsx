@@ -69,6 +69,7 @@ export function Actions(props: ActionsProps) {
           Submit for review
         </button>
       ) : null}
+      {may.submit && !props.canSubmit ? <p className="hint">Choose a kiln first, then submit.</p> : null}
       {may.review ? (
         <>
           <button type="button" className="btn btn-primary" onClick={() => setOpen('approve')}>

@@ -31,6 +31,14 @@ import { useKeeping } from './useKeeping';
 
 const START_HOUR = 6;
 
+/** Why it cannot be changed here. */
+const READ_WORDS = {
+  draft: 'for you to read',
+  'in-review': 'not to be changed meanwhile',
+  approved: 'sealed',
+  retired: 'sealed',
+} as const;
+
 /** The moment the firing is taken to begin: the next morning at six on the studio's clock, until one is chosen. */
 function useStart(zone: string): [number | null, (startMs: number) => void] {
   const isInBrowser = useSyncExternalStore(

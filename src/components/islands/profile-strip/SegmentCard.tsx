@@ -1,4 +1,4 @@
-import { memo, type CSSProperties, type FocusEvent } from 'react';
+import type { CSSProperties, FocusEvent } from 'react';
 import { clockTime } from '../strip/clock';
 import { durationText } from '../strip/duration';
 import {
@@ -177,7 +177,7 @@ function ReadFace(props: CardProps) {
 }
 
 /** One segment's card beneath its stretch of the curve: figures and instruction, typed in place. */
-export const SegmentCard = memo(function SegmentCard(props: CardProps) {
+export function SegmentCard(props: CardProps) {
   const { index, selected } = props;
   const onFocus = (event: FocusEvent<HTMLDivElement>): void => {
     if (!event.currentTarget.contains(event.relatedTarget)) props.onSelect(index);
@@ -198,7 +198,7 @@ export const SegmentCard = memo(function SegmentCard(props: CardProps) {
       {props.readOnly ? <ReadFace {...props} /> : <EditableFace {...props} />}
     </div>
   );
-});
+}
 
 /** The card of an upright strip: what it says fits beside the curve; tapping it opens its fields. */
 export function CardSummary(props: CardProps & { readonly onOpen: (index: number) => void }) {
@@ -212,7 +212,6 @@ export function CardSummary(props: CardProps & { readonly onOpen: (index: number
       data-selected={props.selected || undefined}
       data-hot={props.foreseen?.hot || undefined}
       style={props.place}
-      aria-label={`${cardName(props)}, ${props.readOnly ? 'show' : 'change'}`}
       onClick={(event) => {
         event.currentTarget.scrollIntoView({ block: 'start' });
         props.onSelect(index);
@@ -220,7 +219,10 @@ export function CardSummary(props: CardProps & { readonly onOpen: (index: number
       }}
     >
       <span className="card-row card-top">
-        <span className="card-stage-read">{STAGE_NAMES[segment.stage]}</span>
+        <span className="card-stage-read">
+          <span className="strip-hidden">{`${props.readOnly ? 'Show' : 'Change'} segment ${index + 1}: `}</span>
+          {STAGE_NAMES[segment.stage]}
+        </span>
         <span className="num card-span">{spanText(props).split('–')[0]}</span>
       </span>
       <SegmentFigures {...props} />
