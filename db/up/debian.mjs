@@ -58,7 +58,7 @@ async function install(what, packageName, before = 'true') {
   if (asRoot.length > 0 && capture('sudo', ['-n', 'true']).code !== 0)
     throw new Stop(
       `${what} is not installed, and installing it needs root. Run this, then start again:\n\n` +
-        `  ${process.getuid() === 0 ? '' : 'sudo '}apt-get update && sudo apt-get install -y --no-install-recommends ${packageName}\n`,
+        `  sudo apt-get update && sudo apt-get install -y --no-install-recommends ${packageName}\n`,
     );
   say(`${what} is not installed. Installing it from Debian's packages (${packageName}).`);
   const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
