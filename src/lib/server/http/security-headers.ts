@@ -16,7 +16,11 @@ const NOTHING = "default-src 'none'; frame-ancestors 'none'";
 
 export function setSecurityHeaders(headers: Headers): void {
   for (const [name, value] of Object.entries(ALWAYS)) headers.set(name, value);
-  if (!headers.has('content-security-policy')) headers.set('content-security-policy', NOTHING);
+  // Pages of the development server have no policy: the framework makes one for built pages only.
+  const isPageInDevelopment =
+    import.meta.env.DEV && (headers.get('content-type') ?? '').startsWith('text/html');
+  if (!headers.has('content-security-policy') && !isPageInDevelopment)
+    headers.set('content-security-policy', NOTHING);
   if (!headers.has('cache-control')) headers.set('cache-control', 'no-store');
   if (config().mode === 'production')
     headers.set('strict-transport-security', 'max-age=31536000; includeSubDomains');

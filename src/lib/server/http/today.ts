@@ -7,11 +7,15 @@ import { listProfiles } from '../services/profiles';
 import { listRuns } from '../services/runs';
 
 const WEEK_MS = 7 * 86_400_000;
+/** No studio kiln stays too hot to open for longer. */
+const COOLED_AFTER_MS = 2 * 86_400_000;
 
 /** What the first page tells a person of their studio. */
 export interface Today {
   readonly underWay: readonly Run[];
   readonly cooling: readonly Run[];
+  /** Fired and cold, and nobody has signed the review yet. */
+  readonly toSign: readonly Run[];
   /** Planned to start within a week, or already late; the next first. */
   readonly planned: readonly Run[];
   /** Runs with findings that nobody has judged yet. */
@@ -42,9 +46,12 @@ export async function todayOf(actor: Actor, now: Date): Promise<Today> {
     return own ? [{ handout, read: own.acknowledgedAt !== null }] : [];
   });
   const isOpen = ({ state }: Handout) => state === 'in-force' || state === 'ahead';
+  const isStillHot = (run: Run): boolean =>
+    now.getTime() - Date.parse(run.finishedAt ?? run.startedAt ?? run.plannedStartAt) < COOLED_AFTER_MS;
   return {
     underWay: underWay.items,
-    cooling: cooling.items,
+    cooling: cooling.items.filter(isStillHot),
+    toSign: decides ? cooling.items.filter((run) => !isStillHot(run)) : [],
     planned: planned.items
       .filter((run) => Date.parse(run.plannedStartAt) < now.getTime() + WEEK_MS)
       .sort((a, b) => a.plannedStartAt.localeCompare(b.plannedStartAt)),
