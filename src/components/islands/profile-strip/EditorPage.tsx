@@ -119,11 +119,7 @@ export function EditorPage(props: ProfileEditorProps) {
   };
   const standing = `version ${version.number}, ${STATE_NAMES[version.state]}`;
   const saveLine = readOnly ? (
-    version.state === 'draft' ? (
-      'to read'
-    ) : (
-      'sealed content'
-    )
+    READ_WORDS[version.state]
   ) : (
     <SaveLine state={keeping.state} zone={zone} onRetry={keeping.retry} />
   );
