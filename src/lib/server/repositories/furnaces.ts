@@ -1,7 +1,7 @@
 import { furnaceSchema, type Furnace, type furnaceInputSchema } from '~/lib/contracts/equipment';
 import type { z } from '~/lib/zod';
 import { FurnaceRow } from '../models/furnace';
-import { equipmentRepository, type EquipmentModel } from './equipment';
+import { equipmentRepository } from './equipment';
 import { keptRow } from './row';
 
 export type FurnaceInput = z.output<typeof furnaceInputSchema>;
@@ -11,7 +11,7 @@ export const FURNACE_COLUMNS_OF = { electric: ['ratedKW'], gas: ['burnerKW', 'fu
 const none = { ratedKW: null, burnerKW: null, fuel: null };
 
 export const furnaces = equipmentRepository<Furnace, FurnaceInput>(
-  FurnaceRow as unknown as EquipmentModel,
+  FurnaceRow,
   (row) =>
     furnaceSchema.parse(
       keptRow(row, ...FURNACE_COLUMNS_OF[row['energy'] === 'electric' ? 'gas' : 'electric']),

@@ -1,7 +1,7 @@
 import { kilnSchema, type Kiln, type kilnInputSchema } from '~/lib/contracts/equipment';
 import type { z } from '~/lib/zod';
 import { KilnRow } from '../models/kiln';
-import { equipmentRepository, type EquipmentModel } from './equipment';
+import { equipmentRepository } from './equipment';
 import { keptRow } from './row';
 
 export type KilnInput = z.output<typeof kilnInputSchema>;
@@ -16,7 +16,7 @@ const none = Object.fromEntries(
 );
 
 export const kilns = equipmentRepository<Kiln, KilnInput>(
-  KilnRow as unknown as EquipmentModel,
+  KilnRow,
   (row) =>
     kilnSchema.parse(keptRow(row, ...KILN_COLUMNS_OF[row['energy'] === 'electric' ? 'gas' : 'electric'])),
   (input) => ({ ...none, ...input }),

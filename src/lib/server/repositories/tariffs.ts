@@ -1,14 +1,14 @@
 import { tariffSchema, type Tariff, type tariffInputSchema } from '~/lib/contracts/equipment';
 import type { z } from '~/lib/zod';
 import { TariffRow } from '../models/tariff';
-import { equipmentRepository, type EquipmentModel } from './equipment';
+import { equipmentRepository } from './equipment';
 import { keptRow } from './row';
 
 export type TariffInput = z.output<typeof tariffInputSchema>;
 const PLAN = ['currency', 'energy', 'per', 'price', 'bands', 'co2KgPerKWh', 'co2Source'] as const;
 
 export const tariffs = equipmentRepository<Tariff, TariffInput>(
-  TariffRow as unknown as EquipmentModel,
+  TariffRow,
   (row) =>
     tariffSchema.parse({
       ...keptRow(row, ...PLAN),

@@ -5,13 +5,13 @@ import {
 } from '~/lib/contracts/equipment';
 import type { z } from '~/lib/zod';
 import { ThermocoupleRow } from '../models/thermocouple';
-import { equipmentRepository, type EquipmentModel } from './equipment';
+import { equipmentRepository } from './equipment';
 import { keptRow } from './row';
 
 export type ThermocoupleInput = z.output<typeof thermocoupleInputSchema>;
 
 export const thermocouples = equipmentRepository<Thermocouple, ThermocoupleInput>(
-  ThermocoupleRow as unknown as EquipmentModel,
+  ThermocoupleRow,
   (row) => thermocoupleSchema.parse(keptRow(row)),
   (input) => ({ ...input }),
 );

@@ -25,6 +25,12 @@ export function loadIssues(load: Load | null): Issue[] {
   return issues;
 }
 
+/** Throws 422 for a load of materials that the table does not have: nothing could be computed of it. */
+export function requireKnownMaterials(load: Load | null | undefined): void {
+  const issues = loadIssues(load ?? null);
+  if (issues[0]) throw notValid(`The load is not valid. ${issues[0].path}: ${issues[0].message}.`, issues);
+}
+
 /**
  * Checks what the schema of a body cannot: the length of the profile as planned, the materials of the load, and that the
  * kiln and the furnace named are the actor's to see.

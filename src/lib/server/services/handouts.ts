@@ -176,6 +176,15 @@ export async function handoutForRun(
   return ready.id;
 }
 
+/** The handout that a technician plans a run under: one of the studio's, of the version that is fired. */
+export async function handoutNamed(actor: Actor, id: string, versionId: string, tx?: Tx): Promise<string> {
+  const handout = await findHandout(actor.studioId, null, id, tx);
+  if (!handout) throw notFound('handout');
+  if (handout.version.id !== versionId)
+    throw wrongState('This handout is of another version than the one to be fired.');
+  return id;
+}
+
 async function heldHandout(actor: Actor, id: string, tx: Tx): Promise<HandoutRecord> {
   const handout = isUuid(id) ? await lockHandout(actor.studioId, onlyFor(actor), id, tx) : null;
   if (!handout) throw notFound('handout');

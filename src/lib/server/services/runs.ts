@@ -15,8 +15,9 @@ import {
   type Frozen,
   type RunRecord,
 } from '../repositories/runs';
+import { requireKnownMaterials } from './content-check';
 import { kilnFor, plateOf } from './kilns';
-import { handoutForRun } from './handouts';
+import { handoutForRun, handoutNamed } from './handouts';
 import { requirePeople } from './people';
 import { versionForRun } from './profiles';
 import { lockedRun, readableRun, writableRun } from './run-access';
@@ -58,8 +59,11 @@ export async function createRun(actor: Actor, body: Body<(typeof runRoutes)['cre
     const kiln = await kilnFor(actor, body.kilnId, tx);
     const plannedStartAt = new Date(body.plannedStartAt);
     const technician = hasRole(actor, 'technician');
+    const named =
+      technician && body.handoutId ? await handoutNamed(actor, body.handoutId, version.id, tx) : null;
+    requireKnownMaterials(body.load);
     const handoutId = technician
-      ? (body.handoutId ?? null)
+      ? named
       : await handoutForRun(actor, { versionId: version.id, kilnId: kiln.id, at: plannedStartAt }, tx);
     if (!technician && body.load)
       throw notAllowed('The load of a handed-out profile is as it was handed out.');
@@ -100,6 +104,7 @@ export async function updateRun(
       if (run.state !== 'planned')
         throw wrongState(`Run ${run.number} has begun: its kiln, load and start stay as they were.`);
     }
+    requireKnownMaterials(plan.load);
     if (plan.kilnId !== undefined) await kilnFor(actor, plan.kilnId, tx);
     if (plan.recorderIds !== undefined) {
       await requirePeople(actor, plan.recorderIds, tx);
