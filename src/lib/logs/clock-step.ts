@@ -12,7 +12,7 @@ export interface StepEvidence {
   afterMs: number[];
   /** Rows read so far with times in a span. */
   seen: (fromMs: number, toMs: number) => number;
-  /** An earlier row has this time and these readings. */
+  /** This and the next rows are earlier ones again, their times and their readings, which vary too much for that to be chance. */
   repeats: boolean;
   /** Per channel that is continuous by nature: its change at the step, and how much it usually changes between rows. */
   jump: { change: number; usual: number }[];

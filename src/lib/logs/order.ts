@@ -1,5 +1,5 @@
 import { judgeStep, type StepEvidence } from './clock-step';
-import type { RawBlock } from './raw-block';
+import { sameReadings, type RawBlock } from './raw-block';
 import type { ClockEvent } from './schema';
 import { SortingWindow } from './sorting-window';
 
@@ -102,6 +102,20 @@ export class OrderKeeper {
     return atMs - ms;
   }
 
+  private repeats(block: RawBlock, row: number): boolean {
+    const end = Math.min(block.rows, row + LOOKAHEAD);
+    let same = 0;
+    let changes = 0;
+    for (let i = row; i < end; i++) {
+      const ms = (block.timeMs[i] ?? NaN) + this.shiftMs;
+      if (!repeatsEarlier(block, row, i, ms) && !this.window.holdsSame(block, i, ms)) continue;
+      same++;
+      if (i > row && !sameReadings(block, i, block, i - 1)) changes++;
+    }
+    const few = end - row < TELLING_CHANGES + 1;
+    return same >= 0.9 * (end - row) && (few || changes >= TELLING_CHANGES);
+  }
+
   private evidence(
     block: RawBlock,
     row: number,
@@ -125,11 +139,14 @@ export class OrderKeeper {
       counter: this.options.counter,
       afterMs,
       seen,
-      repeats: this.window.holdsSame(block, row, ms) || repeatsEarlier(block, row, ms),
+      repeats: this.repeats(block, row),
       jump: this.options.continuity.map((channel) => jumpAt(block, row, channel, this.window.lastBlock())),
     };
   }
 }
+
+/** Changes of reading that must be repeated exactly to be no chance: a hold repeats itself anyway. */
+const TELLING_CHANGES = 4;
 
 /** Rows before `row` of a block whose times lie in a span. */
 function between(block: RawBlock, row: number, fromMs: number, toMs: number): number {
@@ -141,11 +158,9 @@ function between(block: RawBlock, row: number, fromMs: number, toMs: number): nu
   return count;
 }
 
-function repeatsEarlier(block: RawBlock, row: number, ms: number): boolean {
-  for (let i = 0; i < row; i++) {
-    if (block.timeMs[i] === ms && block.values.every((column) => Object.is(column[i], column[row])))
-      return true;
-  }
+/** Whether a row before `row` has this time and the readings of row `as`. */
+function repeatsEarlier(block: RawBlock, row: number, as: number, ms: number): boolean {
+  for (let i = 0; i < row; i++) if (block.timeMs[i] === ms && sameReadings(block, i, block, as)) return true;
   return false;
 }
 

@@ -22,7 +22,7 @@ export class SortingWindow {
   blockOrder: 'ascending' | 'descending' | 'overlapping' = 'ascending';
   private blocks: RawBlock[] = [];
   private dirty = false;
-  private emittedAny = false;
+  private emitted = 0;
   private lastEmittedMs = -Infinity;
   private firstEmittedMs = Infinity;
   private readonly capacity: number;
@@ -46,7 +46,7 @@ export class SortingWindow {
 
   finish(): void {
     this.settle();
-    if (this.descending && this.emittedAny) this.blocks.reverse();
+    if (this.descending && this.emitted > 0) this.blocks.reverse();
     for (const block of this.blocks) this.emit(block);
     this.blocks = [];
   }
@@ -57,7 +57,7 @@ export class SortingWindow {
 
   /** Rows held whose times lie in a span; where the span begins before what is held, that part counts as full of rows. */
   countBetween(fromMs: number, toMs: number): number {
-    let count = this.emittedAny && fromMs < this.lastEmittedMs ? 1000 : 0;
+    let count = this.emitted > 0 && fromMs < this.lastEmittedMs ? 1000 : 0;
     for (const { timeMs, rows } of this.blocks) {
       for (let i = 0; i < rows; i++) {
         const ms = timeMs[i] ?? NaN;
@@ -87,15 +87,18 @@ export class SortingWindow {
 
   private emit(block: RawBlock): void {
     if (block.rows === 0) return;
-    const late = this.descending ? lastMs(block) > this.firstEmittedMs : first(block) < this.lastEmittedMs;
-    if (this.emittedAny && late && !(this.descending && lastMs(block) === this.firstEmittedMs))
-      this.blockOrder = 'overlapping';
-    else if (this.emittedAny && this.descending && this.blockOrder === 'ascending')
-      this.blockOrder = 'descending';
-    this.emittedAny = true;
+    if (this.emitted > 0) this.noteOrder(block);
+    this.emitted++;
     this.lastEmittedMs = Math.max(this.lastEmittedMs, lastMs(block));
     this.firstEmittedMs = Math.min(this.firstEmittedMs, first(block));
     this.options.emit(trimmed(block));
+  }
+
+  private noteOrder(block: RawBlock): void {
+    const after = first(block) >= this.lastEmittedMs;
+    const before = lastMs(block) <= this.firstEmittedMs;
+    if (this.emitted === 1 && before && !after) this.blockOrder = 'descending';
+    else if (!(this.blockOrder === 'ascending' ? after : before)) this.blockOrder = 'overlapping';
   }
 
   /** Sorts what is held, if it has to be, and takes out rows that repeat others. */

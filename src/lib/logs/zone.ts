@@ -144,6 +144,9 @@ export class LocalClock {
     if (possible.length === 1) {
       const only = possible[0] ?? 0;
       if (only === this.previousOffsetMs || !smooth) return only;
+      const followedMs = stepMs - (only - this.previousOffsetMs);
+      const off = (ms: number): number => Math.abs(ms - this.typicalStepMs);
+      if (followedMs >= 0 && off(followedMs) <= off(stepMs)) return only;
       // the offset changed without the wall clock having jumped: this logger's clock does not follow the change
       this.stuckOffsetMs = this.previousOffsetMs;
       return this.previousOffsetMs;
