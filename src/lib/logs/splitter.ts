@@ -63,6 +63,11 @@ export class RowSplitter {
   push(piece: string): void {
     if (this.overlong || piece === '') return;
     const text = this.carry + piece;
+    if (!piece.includes('\n')) {
+      this.carry = text;
+      this.overlong = text.length > LONGEST_LINE;
+      return;
+    }
     this.carry = '';
     if (text.includes('"') || this.always === 'papa') {
       this.splitQuoted(text.includes('\r\n') ? holdReturn(text) : text);

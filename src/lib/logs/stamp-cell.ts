@@ -93,6 +93,7 @@ export class StampCell {
   }
 
   private readAnew(text: string): boolean {
+    this.cached = false;
     const stamp = readStamp(text);
     if (!stamp) return false;
     const baseMs = stamp.date ? dayMs(stamp.date, this.order) : 0;
