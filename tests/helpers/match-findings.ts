@@ -33,14 +33,17 @@ export function likeness(found: Found, label: Label): number {
     }
     const share = sharedShare(found, startS, endS);
     if (share >= 0.3) best = Math.max(best, share);
-    if (Math.abs(found.startS - startS) <= 300 && Math.abs(found.endS - endS) <= 300) best = Math.max(best, 0.3 + 0.3 * share);
+    if (Math.abs(found.startS - startS) <= 300 && Math.abs(found.endS - endS) <= 300)
+      best = Math.max(best, 0.3 + 0.3 * share);
   }
   return best;
 }
 
 /** Pairs findings and labels one to one, the best likeness first. */
 export function matchFindings(found: readonly Found[], labels: readonly Label[]): Match {
-  const pairs = found.flatMap((f, i) => labels.map((l, j) => ({ i, j, like: likeness(f, l) }))).filter((p) => p.like > 0);
+  const pairs = found
+    .flatMap((f, i) => labels.map((l, j) => ({ i, j, like: likeness(f, l) })))
+    .filter((p) => p.like > 0);
   pairs.sort((a, b) => b.like - a.like);
   const right = new Map<number, number>();
   const taken = new Set<number>();

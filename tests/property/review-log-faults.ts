@@ -9,12 +9,18 @@ const indexFrom = (firing: SimulatedFiring, atS: number): number => {
   return i < 0 ? times.length : i;
 };
 
-const withChannels = (firing: SimulatedFiring, change: (channel: ReviewChannel) => ReviewChannel): SimulatedFiring => ({
+const withChannels = (
+  firing: SimulatedFiring,
+  change: (channel: ReviewChannel) => ReviewChannel,
+): SimulatedFiring => ({
   ...firing,
   channels: firing.channels.map(change),
 });
 
-const onChamber = (firing: SimulatedFiring, change: (value: Float64Array, channel: ReviewChannel) => Partial<ReviewChannel>) =>
+const onChamber = (
+  firing: SimulatedFiring,
+  change: (value: Float64Array, channel: ReviewChannel) => Partial<ReviewChannel>,
+) =>
   withChannels(firing, (channel) => {
     if (channel.id !== 'chamber') return channel;
     const value = channel.value.slice();
@@ -55,8 +61,13 @@ export function frozen(firing: SimulatedFiring, fromS: number, toS: number): Sim
 export function silent(firing: SimulatedFiring, fromS: number, toS: number): SimulatedFiring {
   const from = indexFrom(firing, fromS);
   const to = indexFrom(firing, toS);
-  const without = (array: Float64Array) => Float64Array.from([...array.subarray(0, from), ...array.subarray(to)]);
-  return withChannels(firing, (channel) => ({ ...channel, timeMs: without(channel.timeMs), value: without(channel.value) }));
+  const without = (array: Float64Array) =>
+    Float64Array.from([...array.subarray(0, from), ...array.subarray(to)]);
+  return withChannels(firing, (channel) => ({
+    ...channel,
+    timeMs: without(channel.timeMs),
+    value: without(channel.value),
+  }));
 }
 
 /** A logger's clock that is set forward. */
@@ -81,11 +92,20 @@ export function stopped(firing: SimulatedFiring, atS: number): SimulatedFiring {
 /** A log that starts late. */
 export function startedLate(firing: SimulatedFiring, atS: number): SimulatedFiring {
   const from = indexFrom(firing, atS);
-  return withChannels(firing, (channel) => ({ ...channel, timeMs: channel.timeMs.slice(from), value: channel.value.slice(from) }));
+  return withChannels(firing, (channel) => ({
+    ...channel,
+    timeMs: channel.timeMs.slice(from),
+    value: channel.value.slice(from),
+  }));
 }
 
 /** A second chamber channel that reads `apartC` off between two times, easing in and out over five minutes. */
-export function withSecond(firing: SimulatedFiring, fromS: number, toS: number, apartC: number): SimulatedFiring {
+export function withSecond(
+  firing: SimulatedFiring,
+  fromS: number,
+  toS: number,
+  apartC: number,
+): SimulatedFiring {
   const chamber = firing.channels[0];
   if (!chamber) return firing;
   const value = chamber.value.map((v, i) => {

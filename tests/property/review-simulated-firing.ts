@@ -53,13 +53,19 @@ export function randomOf(seed: number): Random {
 }
 
 export const between = (random: Random, low: number, high: number) => low + (high - low) * random();
-export const pick = <T>(random: Random, from: readonly T[]): T => from[Math.floor(random() * from.length)] as T;
+export const pick = <T>(random: Random, from: readonly T[]): T =>
+  from[Math.floor(random() * from.length)] as T;
 /** A normal number by the method of Box and Muller. */
 const normal = (random: Random) => Math.sqrt(-2 * Math.log(1 - random())) * Math.cos(2 * Math.PI * random());
 
 export const STEP_S = 2;
 
-const segment = (stage: Segment['stage'], toC: number, rateCPerH: Segment['rateCPerH'], holdS: number): Segment => ({
+const segment = (
+  stage: Segment['stage'],
+  toC: number,
+  rateCPerH: Segment['rateCPerH'],
+  holdS: number,
+): Segment => ({
   stage,
   toC,
   rateCPerH,
@@ -83,12 +89,21 @@ export function randomProfile(random: Random): Profile {
   segments.push(segment('melt-out', atC, Math.round(between(random, 60, 160)), minutes(30, 120)));
   if (random() < 0.5) {
     atC = Math.round(between(random, 500, 730) / 10) * 10;
-    segments.push(segment('burnout', atC, Math.round(between(random, 80, 220)), random() < 0.2 ? 0 : minutes(30, 180)));
+    segments.push(
+      segment('burnout', atC, Math.round(between(random, 80, 220)), random() < 0.2 ? 0 : minutes(30, 180)),
+    );
   }
   const topC = Math.round(between(random, Math.max(atC + 100, 700), 950) / 10) * 10;
   segments.push(segment('vitrification', topC, Math.round(between(random, 100, 260)), minutes(45, 150)));
   const castC = topC - Math.round(between(random, 50, 200) / 10) * 10;
-  segments.push(segment('casting-hold', castC, random() < 0.5 ? 'coast' : Math.round(between(random, 60, 110)), minutes(60, 150)));
+  segments.push(
+    segment(
+      'casting-hold',
+      castC,
+      random() < 0.5 ? 'coast' : Math.round(between(random, 60, 110)),
+      minutes(60, 150),
+    ),
+  );
   return { startC: 20, segments };
 }
 
@@ -122,19 +137,24 @@ const AMBIENT_C = 20;
 function stepKiln(kiln: Kiln, powerW: number, openWPerK: number, lagS: number): void {
   const nodes = [kiln.chamberC, ...kiln.wallC, AMBIENT_C];
   const flows = LINKS_W_PER_K.map((g, i) => g * ((nodes[i] ?? 0) - (nodes[i + 1] ?? 0)));
-  kiln.chamberC += ((powerW - (flows[0] ?? 0) - openWPerK * (kiln.chamberC - AMBIENT_C)) / CHAMBER_J_PER_K) * STEP_S;
-  kiln.wallC = kiln.wallC.map((c, i) => c + (((flows[i] ?? 0) - (flows[i + 1] ?? 0)) / (WALL_J_PER_K[i] ?? 1)) * STEP_S);
+  kiln.chamberC +=
+    ((powerW - (flows[0] ?? 0) - openWPerK * (kiln.chamberC - AMBIENT_C)) / CHAMBER_J_PER_K) * STEP_S;
+  kiln.wallC = kiln.wallC.map(
+    (c, i) => c + (((flows[i] ?? 0) - (flows[i + 1] ?? 0)) / (WALL_J_PER_K[i] ?? 1)) * STEP_S,
+  );
   kiln.readingC += ((kiln.chamberC - kiln.readingC) / lagS) * STEP_S;
 }
 
 /** Power that keeps the reading on a setpoint that moves at a rate: feed-forward of the model, and a PI for the rest. */
 function controlW(kiln: Kiln, setC: number, rateCPerS: number, lagS: number, limitW: number): number {
   const leadC = setC + rateCPerS * lagS;
-  const forwardW = CHAMBER_J_PER_K * rateCPerS + (LINKS_W_PER_K[0] ?? 0) * (kiln.chamberC - (kiln.wallC[0] ?? 0));
+  const forwardW =
+    CHAMBER_J_PER_K * rateCPerS + (LINKS_W_PER_K[0] ?? 0) * (kiln.chamberC - (kiln.wallC[0] ?? 0));
   const errorC = leadC - kiln.chamberC;
   const wantedW = forwardW + 220 * errorC + kiln.integral;
   const givenW = Math.max(0, Math.min(limitW, wantedW));
-  if (givenW === wantedW) kiln.integral = Math.max(-2000, Math.min(2000, kiln.integral + 0.4 * errorC * STEP_S));
+  if (givenW === wantedW)
+    kiln.integral = Math.max(-2000, Math.min(2000, kiln.integral + 0.4 * errorC * STEP_S));
   return givenW;
 }
 
@@ -151,7 +171,12 @@ export interface FiringOptions {
 export function simulatedFiring(options: FiringOptions): SimulatedFiring {
   const { profile, waitBandC, sampling, faults } = options;
   const lagS = 25;
-  const kiln: Kiln = { chamberC: AMBIENT_C, wallC: [AMBIENT_C, AMBIENT_C, AMBIENT_C], readingC: AMBIENT_C, integral: 0 };
+  const kiln: Kiln = {
+    chamberC: AMBIENT_C,
+    wallC: [AMBIENT_C, AMBIENT_C, AMBIENT_C],
+    readingC: AMBIENT_C,
+    integral: 0,
+  };
   const trueC: number[] = [];
   const powerW: number[] = [];
   const legs: SimulatedFiring['legs'] = [];
@@ -175,7 +200,8 @@ export function simulatedFiring(options: FiringOptions): SimulatedFiring {
     const longer = here.find((f) => f.kind === 'hold-long');
     const shorter = here.find((f) => f.kind === 'hold-short');
     const holdS = seg.holdS * (longer ? 1 + longer.by : shorter ? 1 - shorter.by : 1);
-    if (longer || shorter) done.push({ kind: (longer ?? shorter)?.kind ?? '', leg: index, startS: 0, endS: 0 });
+    if (longer || shorter)
+      done.push({ kind: (longer ?? shorter)?.kind ?? '', leg: index, startS: 0, endS: 0 });
     const entry = done[done.length - 1];
     while (ramping || heldS < holdS) {
       if (atS - startS > 5 * 24 * 3600) throw new Error('the simulated kiln never arrives');
@@ -273,7 +299,12 @@ function logged(options: FiringOptions, trueC: readonly number[], powerW: readon
     value.push(Math.round(read / sampling.quantumC) * sampling.quantumC);
     output.push(atS < 0 ? 0 : Math.round(((powerW[i] ?? 0) / RATED_W) * 1000) / 10);
   }
-  const channel = (id: string, role: ReviewChannel['role'], quantity: ReviewChannel['quantity'], values: number[]): ReviewChannel => ({
+  const channel = (
+    id: string,
+    role: ReviewChannel['role'],
+    quantity: ReviewChannel['quantity'],
+    values: number[],
+  ): ReviewChannel => ({
     id,
     name: id,
     role,

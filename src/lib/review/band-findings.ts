@@ -34,7 +34,10 @@ function excursions(bench: Bench, one: FiredLeg, side: 1 | -1, leastS: number): 
   return parts
     .filter((part) => outsideS(bench, part, over) >= leastS && !isNextRamp(bench, one, side, part, to))
     .map((part) => excursion(bench, one, side, part))
-    .filter((found) => (found.byC ?? 0) - leg.bandC >= 1.5 * bench.smoothSigmaC * (bench.smoothSigmaC > 0.5 ? 1 : 0));
+    .filter(
+      (found) =>
+        (found.byC ?? 0) - leg.bandC >= 1.5 * bench.smoothSigmaC * (bench.smoothSigmaC > 0.5 ? 1 : 0),
+    );
 }
 
 /** Time outside the band, with both crossings placed between nodes. */

@@ -15,7 +15,13 @@ import type { Span, Stretch } from './spans';
 export type StuckBy = ReadonlyMap<Sensor, readonly Stretch[]>;
 
 /** Everything that any definition catches inside the run, before causes are sorted out. Holds are judged after that. */
-export function allCandidates(bench: Bench, log: Measured, stuckBy: StuckBy, legs: readonly Leg[], power: Grid | null): Candidate[] {
+export function allCandidates(
+  bench: Bench,
+  log: Measured,
+  stuckBy: StuckBy,
+  legs: readonly Leg[],
+  power: Grid | null,
+): Candidate[] {
   const sensors = [log.control, ...log.others].flatMap((s) => sensorFindings(bench, s, stuckBy.get(s) ?? []));
   const disagree = log.others
     .filter((s) => s.channel.role === 'chamber' && log.control.channel.role === 'chamber')

@@ -55,7 +55,11 @@ export function sortedByCause(bench: Bench, candidates: readonly Candidate[]): S
   // Lateness that another cause explains makes a hold short all the same.
   const late = candidates.filter((one) => one.kind === 'late');
   const control = kept.filter((one) => one.channelId === bench.input.controlChannelId && one.kind !== 'late');
-  kept.push(...holdLengths(bench, late, takenByFindings(bench, control)).filter((hold) => !isLates(bench, hold, late)));
+  kept.push(
+    ...holdLengths(bench, late, takenByFindings(bench, control)).filter(
+      (hold) => !isLates(bench, hold, late),
+    ),
+  );
   kept.sort((a, b) => a.startS - b.startS || rank(a.kind) - rank(b.kind));
   return {
     findings: kept.map((one) => plain(withHoldLost(bench, one), null)),
@@ -70,13 +74,25 @@ function plain(one: Candidate, because: number | null): ComputedFinding {
 
 /** Spans that are other findings' time in a hold: only what keeps the kiln out of its band or cannot be seen. */
 function takenByFindings(bench: Bench, control: readonly Candidate[]): Span[] {
-  const kinds: readonly FindingKind[] = ['power-cut', 'opened', 'overshoot', 'undershoot', 'gap', 'sensor-open', 'sensor-stuck'];
+  const kinds: readonly FindingKind[] = [
+    'power-cut',
+    'opened',
+    'overshoot',
+    'undershoot',
+    'gap',
+    'sensor-open',
+    'sensor-stuck',
+  ];
   return control.filter((one) => kinds.includes(one.kind) && one.startS < bench.runEndS).map(reachOf);
 }
 
 /** On a programmer that runs by the clock, a hold that was short because the kiln came late. */
 function isLates(bench: Bench, hold: Candidate, late: readonly Candidate[]): boolean {
-  return hold.kind === 'hold-short' && bench.input.waitBandC === null && late.some((l) => l.segment === hold.segment);
+  return (
+    hold.kind === 'hold-short' &&
+    bench.input.waitBandC === null &&
+    late.some((l) => l.segment === hold.segment)
+  );
 }
 
 /** Whether `cause`, kept already, accounts for `one`. */

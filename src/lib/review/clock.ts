@@ -104,7 +104,8 @@ function passesHold(
     const fromC = k ? (profile.segments[k - 1]?.toC ?? profile.startC) : profile.startC;
     const sameWay = Math.sign(segment.toC - fromC) === direction;
     const near = Math.abs(beforeC - segment.toC) <= 1.5 * bandOfC(limits, segment.stage);
-    const within = direction * (beforeC - segment.toC) <= errorC && direction * (afterC - segment.toC) >= -errorC;
+    const within =
+      direction * (beforeC - segment.toC) <= errorC && direction * (afterC - segment.toC) >= -errorC;
     return segment.holdS >= limits.gapMinS && sameWay && near && within;
   });
 }
@@ -136,7 +137,11 @@ function lineBeside(timeMs: Float64Array, value: Float64Array, start: number, st
 }
 
 /** Instants of another channel on the same corrected time: seconds from the control channel's first sample. */
-export function correctedTimeS(timeMs: Float64Array, firstMs: number, leaps: readonly ClockLeap[]): Float64Array {
+export function correctedTimeS(
+  timeMs: Float64Array,
+  firstMs: number,
+  leaps: readonly ClockLeap[],
+): Float64Array {
   const timeS = new Float64Array(timeMs.length);
   let passed = 0;
   let shiftS = 0;

@@ -14,7 +14,12 @@ export interface Spike {
  * reading is back at the former level at once: within `spikeBackC`, on a ramp of where the ramp would have brought it.
  * Linear: a window is only sorted where one reading leaps away from the last.
  */
-export function spikesOf(timeS: Float64Array, value: Float64Array, noise: Noise, limits: Thresholds): Spike[] {
+export function spikesOf(
+  timeS: Float64Array,
+  value: Float64Array,
+  noise: Noise,
+  limits: Thresholds,
+): Spike[] {
   const spikes: Spike[] = [];
   const leapC = limits.spikeMinC * 0.4;
   const n = value.length;

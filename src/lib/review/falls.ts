@@ -15,7 +15,8 @@ export function openings(bench: Bench): Candidate[] {
   const lag = Math.max(1, Math.round(limits.openedWithinS / grid.stepS));
   const from = indexAt(grid, 0);
   const to = indexAt(grid, bench.runEndS);
-  const fallsAt = (i: number) => grid.known[i] === 1 && highestBefore(grid, i, lag, from) - grid.value[i]! > limits.openedFallC;
+  const fallsAt = (i: number) =>
+    grid.known[i] === 1 && highestBefore(grid, i, lag, from) - grid.value[i]! > limits.openedFallC;
   const found: Candidate[] = [];
   let doneAt = from;
   for (const part of joined(stretches(from, to, fallsAt), 3)) {
@@ -26,7 +27,8 @@ export function openings(bench: Bench): Candidate[] {
     const leg = bench.fired[segment]?.leg;
     const formerC = grid.value[start]!;
     const back = backAt(grid, turn, formerC - (leg?.bandC ?? limits.bandC), limits.openedBackS);
-    if (back === null || timeAt(grid, back) - timeAt(grid, turn) < GRADUAL_S || leapsBack(grid, turn, back)) continue;
+    if (back === null || timeAt(grid, back) - timeAt(grid, turn) < GRADUAL_S || leapsBack(grid, turn, back))
+      continue;
     doneAt = back;
     found.push(
       candidate({
@@ -50,7 +52,8 @@ function highestIndexBefore(grid: Grid, i: number, lag: number, from: number): n
   for (let j = i - 1; j >= Math.max(from, i - lag); j--) if (grid.value[j]! > grid.value[best]!) best = j;
   return best;
 }
-const highestBefore = (grid: Grid, i: number, lag: number, from: number) => grid.value[highestIndexBefore(grid, i, lag, from)]!;
+const highestBefore = (grid: Grid, i: number, lag: number, from: number) =>
+  grid.value[highestIndexBefore(grid, i, lag, from)]!;
 
 /** Lowest node from `from` on before the curve has risen by `riseC`. */
 function turnAfter(grid: Grid, from: number, riseC: number): number {
@@ -83,8 +86,9 @@ const UNSOAKED_FACTOR = 3;
 const JUDGED_S = 900;
 /** Output below this share of its usual height is off. */
 const OFF_SHARE = 0.06;
-/** Heating is back when the curve has risen by so much. */
+/** Heating is back when the curve has risen by so much, and it comes back at full power: within so long of the turn. */
 const RESUMES_C = 3;
+const RESUMES_S = 360;
 
 /**
  * `power-cut`: where the plan heats or holds, the curve falls as fast as the kiln cools by itself, for at least
@@ -127,7 +131,7 @@ function cutFrom(bench: Bench, power: Grid | null, start: number, turn: number):
   const shouldC = Math.min(bench.setpoint[start]!, smooth.value[start]!);
   const lostC = shouldC - smooth.value[turn]!;
   if (endS - startS < limits.powerCutMinS || !(lostC >= limits.powerCutMinC)) return null;
-  if (!openEnded && !resumes(smooth, turn)) return null;
+  if (!openEnded && !(stillFalls(smooth, start, turn) && resumes(smooth, turn))) return null;
   const off = power ? powerIsOff(power, startS, endS, bench.clock.intervalS) : null;
   if (off === false) return null;
   if (off === null && !fallsByItself(bench, startS, Math.min(endS, startS + JUDGED_S))) return null;
@@ -165,7 +169,8 @@ function heats(bench: Bench, atS: number): boolean {
 function onset(grid: Grid, at: number, half: number, from: number, withinC: number): number {
   const first = Math.max(from, at - 2 * half);
   let top = at;
-  for (let i = first; i <= Math.min(lastIndex(grid), at + half); i++) if (grid.value[i]! > grid.value[top]!) top = i;
+  for (let i = first; i <= Math.min(lastIndex(grid), at + half); i++)
+    if (grid.value[i]! > grid.value[top]!) top = i;
   let last = top;
   for (let i = top; i <= at + half; i++) if (grid.value[i]! > grid.value[top]! - withinC) last = i;
   return last;
@@ -173,7 +178,8 @@ function onset(grid: Grid, at: number, half: number, from: number, withinC: numb
 
 function lowestOf(grid: Grid, from: number, to: number): number {
   let lowest = from;
-  for (let i = from; i <= Math.min(lastIndex(grid), to); i++) if (grid.value[i]! < grid.value[lowest]!) lowest = i;
+  for (let i = from; i <= Math.min(lastIndex(grid), to); i++)
+    if (grid.value[i]! < grid.value[lowest]!) lowest = i;
   return lowest;
 }
 
@@ -187,8 +193,18 @@ function risesAgain(grid: Grid, from: number): boolean {
   return false;
 }
 
+/** Without heat a kiln falls until heat returns; one that only gets too little settles at a lower level first. */
+const STILL_FALLS_SHARE = 0.25;
+
+function stillFalls(grid: Grid, start: number, turn: number): boolean {
+  const late = Math.round(turn - (turn - start) / 3);
+  const lateC = (grid.value[late]! - grid.value[turn]!) / Math.max(1, turn - late);
+  const meanC = (grid.value[start]! - grid.value[turn]!) / Math.max(1, turn - start);
+  return lateC >= STILL_FALLS_SHARE * meanC;
+}
+
 function resumes(grid: Grid, turn: number): boolean {
-  const to = Math.min(lastIndex(grid), turn + Math.round(600 / grid.stepS));
+  const to = Math.min(lastIndex(grid), turn + Math.round(RESUMES_S / grid.stepS));
   for (let i = turn; i <= to; i++) if (grid.value[i]! - grid.value[turn]! > RESUMES_C) return true;
   return false;
 }
@@ -200,7 +216,8 @@ function powerIsOff(power: Grid, startS: number, endS: number, intervalS: number
   const from = indexAt(power, startS + edgeS);
   const to = indexAt(power, endS - edgeS);
   let high = 0;
-  for (let i = 0; i <= lastIndex(power); i++) if (power.known[i] && power.value[i]! > high) high = power.value[i]!;
+  for (let i = 0; i <= lastIndex(power); i++)
+    if (power.known[i] && power.value[i]! > high) high = power.value[i]!;
   let off = 0;
   let seen = 0;
   for (let i = from; i <= to; i++) {
@@ -217,10 +234,14 @@ function fallsByItself(bench: Bench, startS: number, endS: number): boolean {
   const lastC = bench.smooth.value[indexAt(bench.smooth, endS)]!;
   const dropC = firstC - lastC;
   const meanC = (firstC + lastC) / 2;
-  const ownPerH = bench.input.cooling ? 3600 / bench.input.cooling.timeConstantS : coolingOfLog(bench, endS - startS, ambientC);
+  const ownPerH = bench.input.cooling
+    ? 3600 / bench.input.cooling.timeConstantS
+    : coolingOfLog(bench, endS - startS, ambientC);
   const fallPerH = ((dropC / (endS - startS)) * 3600) / Math.max(20, meanC - ambientC);
   const { powerCutShare } = bench.limits;
-  return fallPerH >= ownPerH * (1 - powerCutShare) && fallPerH <= ownPerH * (1 + powerCutShare) * UNSOAKED_FACTOR;
+  return (
+    fallPerH >= ownPerH * (1 - powerCutShare) && fallPerH <= ownPerH * (1 + powerCutShare) * UNSOAKED_FACTOR
+  );
 }
 
 /** Relative cooling rate in the log's own coasts and after its end, over as long a time as the fall took, 1/h. */

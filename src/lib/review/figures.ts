@@ -13,7 +13,10 @@ export function actualSegments(bench: Bench, power: Grid | null): ActualSegment[
     const { leg } = one;
     const endS = endIn(bench, one);
     const rampEndS = one.arrivedS ?? endS;
-    const slope = bench.regression.slopeCPerH(indexAt(bench.smooth, one.startS), indexAt(bench.smooth, rampEndS));
+    const slope = bench.regression.slopeCPerH(
+      indexAt(bench.smooth, one.startS),
+      indexAt(bench.smooth, rampEndS),
+    );
     const holdStartS = one.arrivedS === null ? null : (one.nearS ?? one.arrivedS);
     return {
       segment: leg.index,
@@ -55,7 +58,8 @@ function extremeC(grid: Grid, side: 1 | -1, fromS: number, toS: number): number 
 /** Integral of a power channel in its own unit × hours; what is not known is left out. */
 function powerHours(power: Grid, fromS: number, toS: number): number {
   let sum = 0;
-  for (let i = indexAt(power, fromS); i < indexAt(power, toS); i++) if (power.known[i]) sum += power.value[i]!;
+  for (let i = indexAt(power, fromS); i < indexAt(power, toS); i++)
+    if (power.known[i]) sum += power.value[i]!;
   return (sum * power.stepS) / 3600;
 }
 
@@ -76,10 +80,14 @@ export function figuresOf(
   }
   const deviations = deviationsOf(bench, carried);
   const all = statistics(deviations.map((d) => d.byC));
-  const largest = deviations.reduce<Deviation | null>((a, d) => (a === null || Math.abs(d.byC) > Math.abs(a.byC) ? d : a), null);
+  const largest = deviations.reduce<Deviation | null>(
+    (a, d) => (a === null || Math.abs(d.byC) > Math.abs(a.byC) ? d : a),
+    null,
+  );
   const last = segments[segments.length - 1];
   const plannedEndS = planned.timeS[planned.timeS.length - 1]!;
-  const isWhole = last !== undefined && last.endS !== null && last.segment === bench.input.profile.segments.length - 1;
+  const isWhole =
+    last !== undefined && last.endS !== null && last.segment === bench.input.profile.segments.length - 1;
   const knownTimeS = Float64Array.from({ length: to - from + 1 }, (_, k) => timeAt(grid, from + k));
   return {
     peakC: peakAt < 0 ? null : smooth.value[peakAt]!,

@@ -11,7 +11,13 @@ const ZERO_C_IN_K = 273.15;
  * @param timeS ascending, s
  * @param valueC °C, above −273 °C; NaN pieces are left out
  */
-export function heatWorkH(timeS: ArrayLike<number>, valueC: ArrayLike<number>, fromS: number, toS: number, stepS = 60): number {
+export function heatWorkH(
+  timeS: ArrayLike<number>,
+  valueC: ArrayLike<number>,
+  fromS: number,
+  toS: number,
+  stepS = 60,
+): number {
   let sumS = 0;
   for (let i = 1; i < timeS.length; i++) {
     const a = Math.max(fromS, timeS[i - 1]!);

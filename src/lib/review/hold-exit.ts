@@ -41,7 +41,8 @@ export function holdExit(
     const leftS = departure(grid, regression, leg, direction, i, arrivedS, expectedEndS);
     const backAt = gone ? comesBack(grid, leg, direction, j, returnsLaterS) : j;
     if (backAt === null) return leftS;
-    const early = !gone && isNextRamp(regression, next, i, grid) && Math.abs(leftS - expectedEndS) <= nearS(leg);
+    const early =
+      !gone && isNextRamp(regression, next, i, grid) && Math.abs(leftS - expectedEndS) <= nearS(leg);
     if (early && !settles(grid, leg, backAt, expectedEndS)) return leftS;
     i = backAt + 1;
   }
@@ -87,14 +88,23 @@ function isNextRamp(regression: Regression, next: Leg | null, crossed: number, g
 
 /** Whether the curve stays about the hold from node `from` on. */
 function settles(grid: Grid, leg: Leg, from: number, expectedEndS: number): boolean {
-  const untilS = Math.min(timeAt(grid, from) + SETTLED_S, Math.max(expectedEndS, timeAt(grid, from) + 300));
+  const fromS = timeAt(grid, from);
+  // A hold that is still due may end while the curve settles; one that was over has to be seen to go on.
+  const dueS = expectedEndS > fromS ? Math.max(expectedEndS, fromS + EXPECTED_WITHIN_S) : fromS + SETTLED_S;
+  const untilS = Math.min(fromS + SETTLED_S, dueS);
   const to = Math.min(lastIndex(grid), indexAt(grid, untilS));
   for (let i = from; i <= to; i++) if (Math.abs(grid.value[i]! - leg.toC) > 2 * leg.bandC) return false;
   return true;
 }
 
 /** Node at which a curve that has gone far comes back to the hold and stays; null if it went for good. */
-function comesBack(grid: Grid, leg: Leg, direction: number, from: number, returnsLaterS: number): number | null {
+function comesBack(
+  grid: Grid,
+  leg: Leg,
+  direction: number,
+  from: number,
+  returnsLaterS: number,
+): number | null {
   // Upwards every later cooling passes the level again; downwards only a recovery does.
   if (direction > 0) return null;
   const untilS = Math.min(returnsLaterS, timeAt(grid, from) + BACK_WITHIN_S);

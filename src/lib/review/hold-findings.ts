@@ -78,7 +78,11 @@ export function holdLengths(bench: Bench, late: readonly Candidate[], taken: rea
  * `ended-early`: the log's last sample lies in or before the last hold, nothing seen after it, and more than
  * max(`endedToleranceS`, `endedToleranceShare`) of that hold is missing. A point in time: the last sample.
  */
-export function endedEarly(bench: Bench, legCount: number, lastHold: { index: number; holdS: number } | null): Candidate[] {
+export function endedEarly(
+  bench: Bench,
+  legCount: number,
+  lastHold: { index: number; holdS: number } | null,
+): Candidate[] {
   const last = bench.fired[bench.fired.length - 1];
   if (!last || !lastHold) return [];
   const reached = bench.fired.find((one) => one.leg.index === lastHold.index);

@@ -27,7 +27,8 @@ export function measured(input: ReviewInput, limits: Thresholds): Measured {
   const clock = clockOf(channel.timeMs, channel.value, noiseOf(channel.value), input.profile, limits);
   const sensor = (c: ReviewChannel) => examined(c, clock, firstMs, limits);
   const others = input.channels.filter(
-    (c) => c !== channel && c.quantity === 'temperature' && c.timeMs.length > 2 && FIRED_ROLES.includes(c.role),
+    (c) =>
+      c !== channel && c.quantity === 'temperature' && c.timeMs.length > 2 && FIRED_ROLES.includes(c.role),
   );
   const power = input.channels.find((c) => c.quantity === 'power' && c.timeMs.length > 2);
   return {

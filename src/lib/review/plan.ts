@@ -50,7 +50,10 @@ export function legsOf(profile: Profile, predicted: ReviewInput['predicted'], li
 const PREDICTED_THERE_C = 2;
 
 /** Length of each ramp on the predicted curve, null from the first target on that it never reaches. */
-function rampsOfPrediction(profile: Profile, predicted: NonNullable<ReviewInput['predicted']>): (number | null)[] {
+function rampsOfPrediction(
+  profile: Profile,
+  predicted: NonNullable<ReviewInput['predicted']>,
+): (number | null)[] {
   const { timeS, chamberC } = predicted;
   const ramps: (number | null)[] = [];
   let i = 0;

@@ -23,7 +23,8 @@ export function followProgrammer(
   waitBandC: number | null,
   setpoint?: Float64Array,
 ): ProgrammerLeg {
-  const ramp = leg.rateCPerH === null ? freeRamp(grid, leg, beginS) : ruledRamp(grid, leg, beginS, waitBandC, setpoint);
+  const ramp =
+    leg.rateCPerH === null ? freeRamp(grid, leg, beginS) : ruledRamp(grid, leg, beginS, waitBandC, setpoint);
   if (waitBandC === null) {
     paint(grid, leg, ramp, ramp + leg.holdS, setpoint);
     return { rampEndS: ramp, endS: ramp + leg.holdS };
@@ -42,7 +43,13 @@ export function followProgrammer(
 /** How many bands ahead of its setpoint a kiln is before a person must have had a hand in it. */
 const PUSHED_BANDS = 2;
 
-function ruledRamp(grid: Grid, leg: Leg, beginS: number, waitBandC: number | null, setpoint?: Float64Array): number {
+function ruledRamp(
+  grid: Grid,
+  leg: Leg,
+  beginS: number,
+  waitBandC: number | null,
+  setpoint?: Float64Array,
+): number {
   const { direction } = leg;
   const deltaC = Math.abs(leg.toC - leg.fromC);
   const rateCPerS = (leg.rateCPerH ?? 1) / 3600;

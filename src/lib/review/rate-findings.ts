@@ -14,7 +14,10 @@ const SAME_PUSH_S = 120;
  */
 export function steepRamps(bench: Bench, explained: readonly Span[]): Candidate[] {
   return bench.fired.flatMap((one) => {
-    const byPlan = one.leg.rateCPerH === null ? [] : steepParts(bench, one, explained, planLimit(bench, one.leg.rateCPerH));
+    const byPlan =
+      one.leg.rateCPerH === null
+        ? []
+        : steepParts(bench, one, explained, planLimit(bench, one.leg.rateCPerH));
     const byMaterial = (bench.input.materialRateLimits ?? []).flatMap((limit) =>
       steepParts(bench, one, explained, materialLimit(bench, one, limit)),
     );
@@ -26,7 +29,10 @@ type LimitAt = (index: number) => { limitCPerH: number; askedCPerH: number };
 
 function planLimit(bench: Bench, rateCPerH: number): LimitAt {
   const { steepFactor, steepMarginCPerH } = bench.limits;
-  const limit = { limitCPerH: Math.max(rateCPerH * steepFactor, rateCPerH + steepMarginCPerH), askedCPerH: rateCPerH };
+  const limit = {
+    limitCPerH: Math.max(rateCPerH * steepFactor, rateCPerH + steepMarginCPerH),
+    askedCPerH: rateCPerH,
+  };
   return () => limit;
 }
 
@@ -46,9 +52,14 @@ function steepParts(bench: Bench, one: FiredLeg, explained: readonly Span[], lim
   const { leg } = one;
   if (leg.direction === 0) return [];
   const steep = (i: number) => leg.direction * bench.slopes[i]! > limitAt(i).limitCPerH;
-  const parts = joined(rampStretches(bench, one, explained, steep), Math.round(SAME_PUSH_S / bench.smooth.stepS));
+  const parts = joined(
+    rampStretches(bench, one, explained, steep),
+    Math.round(SAME_PUSH_S / bench.smooth.stepS),
+  );
   return parts
-    .filter((part) => timeAt(bench.smooth, part.to) - timeAt(bench.smooth, part.from) >= bench.limits.steepMinS)
+    .filter(
+      (part) => timeAt(bench.smooth, part.to) - timeAt(bench.smooth, part.from) >= bench.limits.steepMinS,
+    )
     .map((part) => {
       let byCPerH = 0;
       for (let i = part.from; i <= part.to; i++) {
@@ -112,10 +123,16 @@ export function stalls(bench: Bench, explained: readonly Span[]): Candidate[] {
     const { leg } = one;
     if (leg.direction <= 0 || leg.rateCPerH === null) return [];
     const limitCPerH = leg.rateCPerH * bench.limits.stalledShare;
-    const stalled = (i: number) => bench.slopes[i]! < limitCPerH && leg.toC - bench.smooth.value[i]! > leg.bandC;
-    const parts = joined(rampStretches(bench, one, explained, stalled), Math.round(SAME_PUSH_S / bench.smooth.stepS));
+    const stalled = (i: number) =>
+      bench.slopes[i]! < limitCPerH && leg.toC - bench.smooth.value[i]! > leg.bandC;
+    const parts = joined(
+      rampStretches(bench, one, explained, stalled),
+      Math.round(SAME_PUSH_S / bench.smooth.stepS),
+    );
     return parts
-      .filter((part) => timeAt(bench.smooth, part.to) - timeAt(bench.smooth, part.from) >= bench.limits.stalledMinS)
+      .filter(
+        (part) => timeAt(bench.smooth, part.to) - timeAt(bench.smooth, part.from) >= bench.limits.stalledMinS,
+      )
       .map((part) => {
         const startS = timeAt(bench.smooth, part.from);
         const endS = timeAt(bench.smooth, part.to);
@@ -127,7 +144,11 @@ export function stalls(bench: Bench, explained: readonly Span[]): Candidate[] {
           endS,
           reachS: caughtUpS(bench, one, part.to),
           peakC: bench.smooth.value[part.to]!,
-          byC: Math.max(0, (leg.rateCPerH! * (endS - startS)) / 3600 - (bench.smooth.value[part.to]! - bench.smooth.value[part.from]!)),
+          byC: Math.max(
+            0,
+            (leg.rateCPerH! * (endS - startS)) / 3600 -
+              (bench.smooth.value[part.to]! - bench.smooth.value[part.from]!),
+          ),
           byS: endS - startS,
         });
       });
@@ -138,7 +159,8 @@ export function stalls(bench: Bench, explained: readonly Span[]): Candidate[] {
 function caughtUpS(bench: Bench, one: FiredLeg, from: number): number {
   const to = indexAt(bench.smooth, endIn(bench, one));
   for (let i = from; i <= to; i++) {
-    if (Math.abs(bench.setpoint[i]! - bench.smooth.value[i]!) <= one.leg.bandC) return timeAt(bench.smooth, i);
+    if (Math.abs(bench.setpoint[i]! - bench.smooth.value[i]!) <= one.leg.bandC)
+      return timeAt(bench.smooth, i);
   }
   return endIn(bench, one);
 }

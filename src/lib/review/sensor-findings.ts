@@ -28,19 +28,23 @@ export function sensorFindings(bench: Bench, sensor: Sensor, stuck: readonly Str
 
 function highest(sensor: Sensor, part: Stretch): number {
   let best = part.from;
-  for (let i = part.from; i <= part.to; i++) if (sensor.channel.value[i]! > sensor.channel.value[best]!) best = i;
+  for (let i = part.from; i <= part.to; i++)
+    if (sensor.channel.value[i]! > sensor.channel.value[best]!) best = i;
   return best;
 }
 
 function lowest(sensor: Sensor, part: Stretch): number {
   let best = part.from;
-  for (let i = part.from; i <= part.to; i++) if (sensor.channel.value[i]! < sensor.channel.value[best]!) best = i;
+  for (let i = part.from; i <= part.to; i++)
+    if (sensor.channel.value[i]! < sensor.channel.value[best]!) best = i;
   return best;
 }
 
 /** How far the setpoint moved while a sensor stood still; null outside the run. */
 function movedC(bench: Bench, fromS: number, toS: number): number | null {
-  const moved = Math.abs(bench.setpoint[indexAt(bench.grid, toS)]! - bench.setpoint[indexAt(bench.grid, fromS)]!);
+  const moved = Math.abs(
+    bench.setpoint[indexAt(bench.grid, toS)]! - bench.setpoint[indexAt(bench.grid, fromS)]!,
+  );
   return moved === moved ? moved : null;
 }
 
@@ -71,7 +75,9 @@ export function disagreements(bench: Bench, other: Sensor, otherGrid: Grid): Can
     let byC = 0;
     for (let i = part.from; i <= part.to; i++) byC = Math.max(byC, apartC(i));
     const segment = segmentAt(bench.fired, startS);
-    return [candidate({ kind: 'channels-disagree', channelId: other.channel.id, segment, startS, endS, byC })];
+    return [
+      candidate({ kind: 'channels-disagree', channelId: other.channel.id, segment, startS, endS, byC }),
+    ];
   });
 }
 
@@ -83,11 +89,15 @@ export function clockFindings(bench: Bench, events: readonly ClockEvent[], first
   const { leaps, leapAtS } = bench.clock;
   return [
     ...bench.gaps.map((gap) => at('gap', gap.startS, gap.endS, gap.endS - gap.startS)),
-    ...leapAtS.map((logS, k) => at('clock-jump', logS - bench.startOffsetS, logS - bench.startOffsetS, leaps[k]?.shiftS ?? 0)),
+    ...leapAtS.map((logS, k) =>
+      at('clock-jump', logS - bench.startOffsetS, logS - bench.startOffsetS, leaps[k]?.shiftS ?? 0),
+    ),
     ...events
       .filter((event) => event.kind === 'restart' || event.shiftS > bench.limits.clockStepMinS)
       .map((event) => {
-        const before = leaps.filter((leap) => leap.atMs < event.atMs).reduce((sum, leap) => sum + leap.shiftS, 0);
+        const before = leaps
+          .filter((leap) => leap.atMs < event.atMs)
+          .reduce((sum, leap) => sum + leap.shiftS, 0);
         const atS = (event.atMs - firstMs) / 1000 - before - bench.startOffsetS;
         return at('clock-jump', atS, atS, -event.shiftS);
       }),

@@ -13,7 +13,12 @@ const LOOSE_CONTACT_S = 300;
  * that stays for `openMinS` and `openMinSamples` before it steps back (or to the end). An opened kiln falls over many
  * samples and comes back gradually; a stuck reading steps only once, when it is released.
  */
-export function openStretches(channel: ReviewChannel, timeS: Float64Array, spiky: Uint8Array, limits: Thresholds): Stretch[] {
+export function openStretches(
+  channel: ReviewChannel,
+  timeS: Float64Array,
+  spiky: Uint8Array,
+  limits: Thresholds,
+): Stretch[] {
   const range = channel.rangeC ?? ANY_KILN;
   const { value } = channel;
   const n = value.length;
@@ -38,7 +43,13 @@ export function openStretches(channel: ReviewChannel, timeS: Float64Array, spiky
 }
 
 /** Stretches that begin with a step and end with one back to about where it came from. */
-function steps(timeS: Float64Array, value: Float64Array, lost: Uint8Array, spiky: Uint8Array, limits: Thresholds): Stretch[] {
+function steps(
+  timeS: Float64Array,
+  value: Float64Array,
+  lost: Uint8Array,
+  spiky: Uint8Array,
+  limits: Thresholds,
+): Stretch[] {
   const found: Stretch[] = [];
   const n = value.length;
   let previous = -1;
@@ -92,7 +103,8 @@ function joinedInTime(parts: readonly Stretch[], timeS: Float64Array): Stretch[]
   const out: Stretch[] = [];
   for (const part of parts) {
     const last = out[out.length - 1];
-    if (last && timeS[part.from]! - timeS[last.to]! <= LOOSE_CONTACT_S) out[out.length - 1] = { from: last.from, to: part.to };
+    if (last && timeS[part.from]! - timeS[last.to]! <= LOOSE_CONTACT_S)
+      out[out.length - 1] = { from: last.from, to: part.to };
     else out.push(part);
   }
   return out;

@@ -14,10 +14,19 @@ export function frozenStretches(timeS: Float64Array, value: Float64Array, limits
   return found;
 }
 
-/** Reading of the first sound sample after a stretch, NaN if there is none within ten samples. */
-export function readingAfter(value: Float64Array, stretch: Stretch): number {
-  for (let i = stretch.to + 1; i < value.length && i <= stretch.to + 10; i++) {
-    if (value[i] === value[i]) return value[i]!;
+/**
+ * How a frozen reading comes free: the leap to the first reading after it, and the step from there to the next, °C. A kiln
+ * that leaves a hold makes two like steps, a sensor that comes free one large one. Null if nothing is read soon after.
+ */
+export function release(value: Float64Array, stretch: Stretch): { byC: number; thenC: number } | null {
+  const after: number[] = [];
+  for (let i = stretch.to + 1; i < value.length && i <= stretch.to + 10 && after.length < 2; i++) {
+    if (value[i] === value[i]) after.push(value[i]!);
   }
-  return Number.NaN;
+  const [first, second] = after;
+  if (first === undefined) return null;
+  return {
+    byC: Math.abs(first - value[stretch.to]!),
+    thenC: second === undefined ? 0 : Math.abs(second - first),
+  };
 }

@@ -20,7 +20,12 @@ export interface Sensor {
 }
 
 /** Looks a channel's raw samples through, in time linear in their number. */
-export function examined(channel: ReviewChannel, clock: LogClock, firstMs: number, limits: Thresholds): Sensor {
+export function examined(
+  channel: ReviewChannel,
+  clock: LogClock,
+  firstMs: number,
+  limits: Thresholds,
+): Sensor {
   const timeS = correctedTimeS(channel.timeMs, firstMs, clock.leaps);
   const noise = noiseOf(channel.value);
   const dropped = new Uint8Array(channel.value.length);
@@ -32,7 +37,9 @@ export function examined(channel: ReviewChannel, clock: LogClock, firstMs: numbe
     channel,
     timeS,
     noise,
-    spikes: spikes.filter((spike) => !open.some((part) => spike.from <= part.to + 1 && spike.to >= part.from - 1)),
+    spikes: spikes.filter(
+      (spike) => !open.some((part) => spike.from <= part.to + 1 && spike.to >= part.from - 1),
+    ),
     open,
     frozen: frozenStretches(timeS, channel.value, limits),
     dropped,

@@ -7,7 +7,8 @@ import type { ComputedFinding, Severity } from './types';
 export function severityOf(finding: ComputedFinding): Severity {
   const byC = finding.byC ?? 0;
   const byS = Math.abs(finding.byS ?? 0);
-  if (finding.remarks.includes('material-limit') || finding.remarks.includes('steep-recovery')) return 'serious';
+  if (finding.remarks.includes('material-limit') || finding.remarks.includes('steep-recovery'))
+    return 'serious';
   switch (finding.kind) {
     case 'overshoot':
       return byC > 30 ? 'serious' : 'warn';

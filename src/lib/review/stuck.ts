@@ -1,5 +1,5 @@
 import { indexAt, type Grid } from './grid';
-import { readingAfter } from './sensor-stuck';
+import { release } from './sensor-stuck';
 import type { Sensor } from './sensors';
 import type { Stretch } from './spans';
 import type { Thresholds } from './thresholds';
@@ -21,10 +21,10 @@ export function stuckStretches(
     const fromS = sensor.timeS[part.from]!;
     const toS = sensor.timeS[part.to]!;
     const moved =
-      sampled(planAt, fromS, toS) > limits.bandC || others.some((grid) => rangeC(grid, fromS, toS) > limits.bandC);
-    const released = readingAfter(sensor.channel.value, part);
-    const leapC = Math.abs(released - sensor.channel.value[part.from]!);
-    return moved && (released !== released || leapC > limits.bandC / 2);
+      sampled(planAt, fromS, toS) > limits.bandC ||
+      others.some((grid) => rangeC(grid, fromS, toS) > limits.bandC);
+    const leap = release(sensor.channel.value, part);
+    return moved && (leap === null || leap.byC > Math.max(limits.bandC / 2, 2 * leap.thenC));
   });
 }
 

@@ -29,7 +29,8 @@ export function verdictOf(input: VerdictInput): string {
   const clauses = telling.sort((a, b) => a.startS - b.startS).map((finding) => clauseOf(finding, profile));
   const rest = findings.length - clauses.length;
   const first = Math.min(...findings.map((f) => f.segment));
-  const lead = first > 0 ? `followed the plan to ${degrees(profile.segments[first - 1]?.toC ?? profile.startC)}` : null;
+  const lead =
+    first > 0 ? `followed the plan to ${degrees(profile.segments[first - 1]?.toC ?? profile.startC)}` : null;
   const parts = [...(lead ? [lead] : []), ...clauses];
   const more = rest > 0 ? `, and ${rest} more ${rest === 1 ? 'finding' : 'findings'}` : '';
   return capital(`${listed(parts)}${on}${more}.`);
