@@ -1,4 +1,5 @@
 import { useEffect, useState } from 'react';
+import { flushSync } from 'react-dom';
 
 const NAMES = ['ink', 'ink-2', 'line-ink', 'paper', 'sheet', 'grid-1', 'grid-2', 'line', 'hot-fill'] as const;
 export type Palette = Readonly<Record<(typeof NAMES)[number], string>>;
@@ -19,16 +20,21 @@ export function usePaletteVersion(): number {
   const [version, setVersion] = useState(0);
   useEffect(() => {
     const changed = (): void => setVersion((before) => before + 1);
+    // A print is laid out at once after this event: the canvas is to be drawn in its colours by then.
+    const printing = (): void => flushSync(changed);
     const observer = new MutationObserver(changed);
     observer.observe(document.documentElement, {
       attributes: true,
       attributeFilter: ['data-theme', 'class'],
     });
-    const media = ['(prefers-color-scheme: dark)', 'print'].map((query) => window.matchMedia(query));
-    for (const query of media) query.addEventListener('change', changed);
+    const night = window.matchMedia('(prefers-color-scheme: dark)');
+    const print = window.matchMedia('print');
+    night.addEventListener('change', changed);
+    print.addEventListener('change', printing);
     return () => {
       observer.disconnect();
-      for (const query of media) query.removeEventListener('change', changed);
+      night.removeEventListener('change', changed);
+      print.removeEventListener('change', printing);
     };
   }, []);
   return version;
