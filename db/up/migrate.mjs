@@ -22,7 +22,8 @@ export async function migrate(client, { appRole = APP_ROLE, folder = FOLDER } = 
     );
     await client.query(`grant select on migrations to ${client.escapeIdentifier(appRole)}`);
     const known = new Set(migrationNames(folder));
-    const unknown = (await umzug.executed()).map((each) => each.name).filter((name) => !known.has(name));
+    const { rows } = await client.query('select name from migrations order by name');
+    const unknown = rows.map((row) => row.name).filter((name) => !known.has(name));
     if (unknown.length > 0)
       throw new Stop(
         `This database was migrated by newer code: it holds ${unknown.join(', ')}, which this version does not know. ` +

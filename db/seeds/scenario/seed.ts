@@ -12,7 +12,8 @@ import { createRun, signOffRun, startRun } from '~/lib/server/services/runs';
 import { createTariff } from '~/lib/server/services/tariffs';
 import { createThermocouple } from '~/lib/server/services/thermocouples';
 import { demoAccounts, type DemoKey } from '../people';
-import { LOADS, PROFILES, RUNS, type DemoRun, type KilnKey, type LoadKey, type ProfileKey } from './firings';
+import { RUNS, type DemoRun } from './firings';
+import { LOADS, PROFILES, type KilnKey, type LoadKey, type ProfileKey } from './plans';
 import { simulateFiring } from './firing-simulator';
 import { writeLog } from './log-writer';
 import {

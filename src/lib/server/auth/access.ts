@@ -64,7 +64,6 @@ export const ACCESS: readonly AccessRule[] = [
   formPage('/handouts/new', TEACHERS),
   formPage('/handouts/[id]', EVERY_ROLE),
   page('/handouts/[id]/print', EVERY_ROLE),
-  page('/people', STAFF),
 
   // ---------------------------------------------------------------- the site itself
   api('/health', { GET: 'anyone' }),

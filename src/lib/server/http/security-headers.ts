@@ -16,11 +16,9 @@ const NOTHING = "default-src 'none'; frame-ancestors 'none'";
 
 export function setSecurityHeaders(headers: Headers): void {
   for (const [name, value] of Object.entries(ALWAYS)) headers.set(name, value);
-  // Pages of the development server have no policy: the framework makes one for built pages only.
-  const isPageInDevelopment =
-    import.meta.env.DEV && (headers.get('content-type') ?? '').startsWith('text/html');
-  if (!headers.has('content-security-policy') && !isPageInDevelopment)
-    headers.set('content-security-policy', NOTHING);
+  // Pages bring their own policy from the build; those of the development server have none.
+  const isPage = (headers.get('content-type') ?? '').startsWith('text/html');
+  if (!isPage) headers.set('content-security-policy', NOTHING);
   if (!headers.has('cache-control')) headers.set('cache-control', 'no-store');
   if (config().mode === 'production')
     headers.set('strict-transport-security', 'max-age=31536000; includeSubDomains');

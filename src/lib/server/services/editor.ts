@@ -3,12 +3,12 @@ import type { Kiln } from '~/lib/contracts/equipment';
 import { isOnlyStudent, type Actor } from '../auth/actor';
 import { HoldfastError } from '../errors';
 import { studioRules } from '../repositories/studio-rules';
-import { listFurnaces } from '../services/furnaces';
-import { getKiln, listKilns } from '../services/kilns';
-import { getProfile } from '../services/profiles';
-import { listTariffs } from '../services/tariffs';
-import { listThermocouples } from '../services/thermocouples';
-import { getVersion } from '../services/versions';
+import { listFurnaces } from './furnaces';
+import { getKiln, listKilns } from './kilns';
+import { getProfile } from './profiles';
+import { listTariffs } from './tariffs';
+import { listThermocouples } from './thermocouples';
+import { getVersion } from './versions';
 
 const IN_USE = { limit: 200, archived: 'no' } as const;
 
