@@ -82,7 +82,7 @@ function Chamber({ form, linings }: { readonly form: Tools; readonly linings: Ki
       <QuantityField
         form={form}
         name="ventM3PerH"
-        label="Air through the open vent, if known"
+        label="Air through its vent, if known"
         kind="number"
         unit="m³/h"
       />

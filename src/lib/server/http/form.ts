@@ -42,7 +42,7 @@ export async function readForm(request: Request): Promise<Form> {
     bytes += (chunk as Uint8Array).byteLength;
     if (bytes > MAX_FORM_BYTES)
       throw new HoldfastError('too-large', `A form may hold ${MAX_FORM_BYTES} bytes here.`);
-    text += decoder.decode(chunk as Uint8Array, { stream: true });
+    text += decoder.decode(chunk, { stream: true });
   }
   return new Form(new URLSearchParams(text + decoder.decode()));
 }
