@@ -3,6 +3,7 @@ import { useUnits } from '~/lib/client/units';
 import type { Version } from '~/lib/contracts/profiles';
 import { plannedCurve } from '~/lib/profile/planned';
 import { SAFETY_NOTES, safetyNotesFor } from '~/lib/profile/safety';
+import { issuesOf } from '~/lib/profile/validate';
 import type { Caution } from '~/lib/thermal/estimate-schema';
 import { nextClockHour } from '../strip/clock';
 import { Actions } from './Actions';
@@ -143,6 +144,8 @@ export function EditorPage(props: ProfileEditorProps) {
             estimate={estimate}
             before={was?.estimate ?? null}
             plannedS={planned.durationS}
+            hasKiln={kiln !== null}
+            isAssumed={planned.legs.some((leg) => leg.slopeFrom === 'assumption')}
             startMs={startMs}
             zone={zone}
           />
@@ -158,6 +161,11 @@ export function EditorPage(props: ProfileEditorProps) {
         />
       ) : null}
       <Returned version={version} zone={zone} />
+      {issuesOf(document.profile).map((issue) => (
+        <p key={issue.path} className="notice notice-hot" role="alert">
+          {`It cannot be kept or computed as it stands: it ${issue.message}.`}
+        </p>
+      ))}
       {panel === null ? null : (
         <section
           id={`panel-${panel}`}

@@ -1,4 +1,5 @@
 import type { ReactNode } from 'react';
+import { ASSUMED_RATE_C_PER_H } from '~/lib/profile/planned';
 import type { Estimate } from '~/lib/thermal/estimate-schema';
 import { formatNumber, THIN_SPACE } from '~/lib/units';
 import { clockTime, shortDay } from '../strip/clock';
@@ -8,6 +9,9 @@ interface FiguresProps {
   readonly estimate: Estimate | null;
   readonly before: Estimate | null;
   readonly plannedS: number;
+  readonly hasKiln: boolean;
+  /** Some ramp is the kiln's to decide, and no kiln has said: it is drawn at an assumed rate. */
+  readonly isAssumed: boolean;
   readonly startMs: number | null;
   readonly zone: string;
 }
@@ -60,17 +64,20 @@ function momentText(atS: number, startMs: number | null, zone: string): string {
   return day === shortDay(startMs, zone) ? clock : `${clock} ${day.slice(0, 3)}`;
 }
 
+function planNote(hasKiln: boolean, isAssumed: boolean): string {
+  const plan = isAssumed
+    ? `as planned, with ${ASSUMED_RATE_C_PER_H} °C/h assumed where the kiln decides`
+    : 'as planned';
+  return hasKiln ? plan : `${plan}; choose a kiln to see what it will do`;
+}
+
 /** Time, energy and readiness of the firing, each with what the last change did to it. */
-export function Figures({ estimate, before, plannedS, startMs, zone }: FiguresProps) {
+export function Figures({ estimate, before, plannedS, hasKiln, isAssumed, startMs, zone }: FiguresProps) {
   const at = (timeS: number): string => momentText(timeS, startMs, zone);
   if (!estimate)
     return (
       <div className="figures">
-        <Figure
-          value={<Hours seconds={plannedS} />}
-          change=""
-          note="as planned; choose a kiln to see what it will do"
-        />
+        <Figure value={<Hours seconds={plannedS} />} change="" note={planNote(hasKiln, isAssumed)} />
       </div>
     );
   const energyDigits = estimate.energyKWh < 100 ? 1 : 0;

@@ -4,8 +4,9 @@ import { formatInterval, type UnitPreferences } from '~/lib/units';
 import { Bracket } from '../strip/Bracket';
 import { durationText } from '../strip/duration';
 import { Hatch } from '../strip/Hatch';
+import { ASIDE_SHARE, type StripLayer } from '../strip/layers';
 import type { StripScales } from '../strip/scales';
-import { largestLag, lateSegments, type LayerId } from './layers-shown';
+import { asidePeaks, largestLag, lateSegments, type LayerId } from './layers-shown';
 
 interface MarksProps {
   readonly scales: StripScales;
@@ -96,8 +97,42 @@ function LagNote({
   );
 }
 
+/** What each aside comes to at its highest, written where that is. */
+function AsidePeaks({
+  scales,
+  layers,
+}: {
+  readonly scales: StripScales;
+  readonly layers: readonly StripLayer[];
+}) {
+  const { box, view, flow } = scales;
+  if (flow === 'down') return null;
+  const y = scales.tempPx(view.minC + (view.maxC - view.minC) * ASIDE_SHARE) - 7;
+  const taken: number[] = [];
+  return (
+    <g className="strip-note">
+      {asidePeaks(layers).map((peak) => {
+        const x = scales.timePx(peak.atS);
+        const level = taken.filter((other) => Math.abs(other - x) < 130).length;
+        taken.push(x);
+        const anchor = x < box.leftPx + 60 ? 'start' : x > box.leftPx + box.widthPx - 60 ? 'end' : 'middle';
+        return (
+          <text key={peak.id} x={anchor === 'start' ? x + 24 : x} y={y - level * 15} textAnchor={anchor}>
+            {peak.text}
+          </text>
+        );
+      })}
+    </g>
+  );
+}
+
 /** Over the curves: where the kiln is late, and how far the mould core trails. */
-export function MarksOver(props: MarksProps & { readonly scale: UnitPreferences['temperature'] }) {
+export function MarksOver(
+  props: MarksProps & {
+    readonly scale: UnitPreferences['temperature'];
+    readonly layers: readonly StripLayer[];
+  },
+) {
   const { scales, planned, estimate, shown } = props;
   const late = lateSegments(planned, estimate);
   return (
@@ -114,6 +149,7 @@ export function MarksOver(props: MarksProps & { readonly scale: UnitPreferences[
           level={order > 0 && segment.plannedS - (late[order - 1]?.realS ?? 0) < 3600 ? 1 : 0}
         />
       ))}
+      <AsidePeaks scales={scales} layers={props.layers} />
       {shown.has('core') ? <LagNote scales={scales} estimate={estimate} scale={props.scale} /> : null}
     </g>
   );

@@ -120,7 +120,7 @@ export function ProfileStrip(props: ProfileStripProps) {
         under={(scales) => <MarksUnder scales={scales} {...marks} />}
         over={(scales) => (
           <>
-            <MarksOver scales={scales} {...marks} scale={scale} />
+            <MarksOver scales={scales} {...marks} scale={scale} layers={layers} />
             {readOnly ? null : (
               <PlanHandles
                 scales={scales}

@@ -17,7 +17,12 @@ export function StartPicker(props: {
     if (Number.isFinite(wallMs)) props.onChange(instantOfWallClock(wallMs, zone));
   };
   return (
-    <div className="start-picker">
+    <div
+      className="start-picker"
+      onKeyDown={(event) => {
+        if (event.key === 'Escape') setOpen(false);
+      }}
+    >
       <span>
         Start{' '}
         <button

@@ -53,7 +53,8 @@ async function update(kept: Kept, document: ProfileDocument): Promise<Kept> {
     });
     next = { ...next, version, document: { ...document, name: kept.document.name } };
   }
-  if (kept.document.name !== document.name) {
+  // A name being retyped may be empty for a moment: the old one stands until there is another.
+  if (document.name.trim() !== '' && kept.document.name !== document.name) {
     const renamed = await call(profileRoutes.update, {
       params: { id: kept.profileId },
       revision: next.profileRevision,

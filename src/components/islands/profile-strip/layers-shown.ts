@@ -1,5 +1,6 @@
 import type { PlannedCurve } from '~/lib/profile/planned';
 import type { Estimate } from '~/lib/thermal/estimate-schema';
+import { formatNumber, THIN_SPACE } from '~/lib/units';
 import type { StripLayer } from '../strip/layers';
 
 /** What can be laid on the editor's strip, in the order of the switches. */
@@ -88,6 +89,22 @@ export function layersOf(
     if (shown.has(aside.id)) layers.push(...asideLayer(aside, curve, name));
   }
   return layers;
+}
+
+/** Where an aside is highest, with what it is there, so that its scale can be read off the strip. */
+export function asidePeaks(layers: readonly StripLayer[]): { id: string; atS: number; text: string }[] {
+  return layers.flatMap((layer) => {
+    if (!layer.full) return [];
+    const at = layer.value.findIndex((share) => share !== null && share >= 1);
+    const { value, unit, digits } = layer.full;
+    return [
+      {
+        id: layer.id,
+        atS: layer.timeS[at] ?? 0,
+        text: `${layer.name} ${formatNumber(value, digits)}${THIN_SPACE}${unit}`,
+      },
+    ];
+  });
 }
 
 /** Where the mould core trails the chamber most while the kiln heats: the moment and by how much; null below 5 °C. */

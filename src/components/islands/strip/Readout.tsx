@@ -1,4 +1,5 @@
 import { useState, type PointerEvent } from 'react';
+import { createPortal } from 'react-dom';
 import { formatNumber, formatTemperature, THIN_SPACE } from '~/lib/units';
 import { clockTime } from './clock';
 import { durationText } from './duration';
@@ -12,6 +13,8 @@ interface ReadoutProps {
   readonly temperature: TemperatureUnit;
   readonly startMs: number | null;
   readonly zone: string;
+  /** Where the box is drawn: above all that lies on the strip, while the ground stays beneath it. */
+  readonly top: SVGGElement | null;
 }
 
 function textOf(layer: StripLayer, atS: number, temperature: TemperatureUnit): string | null {
@@ -71,7 +74,7 @@ export function Readout(props: ReadoutProps) {
         onPointerMove={follow}
         onPointerLeave={() => setAtS(null)}
       />
-      {atS === null ? null : <Lines {...props} atS={atS} />}
+      {atS === null || props.top === null ? null : createPortal(<Lines {...props} atS={atS} />, props.top)}
     </>
   );
 }

@@ -1,4 +1,4 @@
-import { useId, useMemo, useRef, type ReactNode } from 'react';
+import { useId, useMemo, useRef, useState, type ReactNode } from 'react';
 import { Curves } from './Curves';
 import type { StripLayer } from './layers';
 import { Paper, type TemperatureUnit } from './Paper';
@@ -69,6 +69,7 @@ function useStripScales(props: StripProps, widthPx: number): StripScales {
 function StripBody(props: StripProps & { readonly widthPx: number }) {
   const { widthPx, layers, temperature, zone, startMs } = props;
   const scales = useStripScales(props, widthPx);
+  const [top, setTop] = useState<SVGGElement | null>(null);
   const { box, flow } = scales;
   const across = flow === 'across';
   const fullWidth = across ? box.leftPx + box.widthPx + MARGIN.rightPx : widthPx;
@@ -90,9 +91,11 @@ function StripBody(props: StripProps & { readonly widthPx: number }) {
               temperature={temperature}
               startMs={startMs}
               zone={zone}
+              top={top}
             />
           )}
           {props.over?.(scales)}
+          <g ref={setTop} />
         </svg>
       </div>
       {props.beside?.(scales)}
