@@ -79,8 +79,7 @@ function openUnit(
   );
   const telling = open.filter((i) => !drafts[i]?.setpoint && (statistics[i]?.samples ?? 0) > 0);
   const hottest = (telling.length > 0 ? telling : open).reduce<number | null>(
-    (best, i) =>
-      best === null || (statistics[i]?.max ?? -Infinity) > (statistics[best]?.max ?? -Infinity) ? i : best,
+    (best, i) => (best === null || evidentlyBetter(statistics, i, best) ? i : best),
     null,
   );
   const own = hottest === null ? undefined : statistics[hottest];
@@ -111,6 +110,17 @@ function openUnit(
     guess: verdict.guess,
   });
   return verdict.guess;
+}
+
+/** A channel that begins at the temperature of the room tells more than one that does not; of two such, the hotter one. */
+function evidentlyBetter(statistics: readonly ChannelStatistics[], a: number, b: number): boolean {
+  const [own, other] = [statistics[a], statistics[b]];
+  if (!own || !other) return false;
+  const rank = (channel: ChannelStatistics): number =>
+    'unit' in unitByEvidence({ start: startOf(channel), min: channel.min, max: channel.max, decimals: 0 })
+      ? 1
+      : 0;
+  return rank(own) === rank(other) ? own.max > other.max : rank(own) > rank(other);
 }
 
 function settle(

@@ -1,4 +1,5 @@
 import { cellKind, headRows, isDataLike, shapeOf, type CellKind, type HeadRow, type RowShape } from './cells';
+import { decimalPairs, joinHeadRow, type DecimalPairs } from './decimal-pairs';
 import { unitCell } from './header-words';
 import { DELIMITERS, type Delimiter } from './schema';
 
@@ -16,6 +17,8 @@ export interface Layout {
   width: number;
   /** Rows of readings among the first ones, and what stood before the header. */
   dataRows: HeadRow[];
+  /** Set where decimal commas were split like delimiters. */
+  pairs: DecimalPairs | null;
   preamble: HeadRow[];
 }
 
@@ -33,9 +36,12 @@ const KIND_ROWS = 100;
 export function findLayout(text: string, whole: boolean): Layout | null {
   const delimiter = bestDelimiter(text, whole);
   if (!delimiter) return null;
-  const rows = examine(headRows(text, delimiter, whole));
-  const width = usualWidth(rows);
-  if (width === 0) return null;
+  const split = examine(headRows(text, delimiter, whole));
+  const splitWidth = usualWidth(split);
+  if (splitWidth === 0) return null;
+  const pairs = delimiter === ',' ? decimalPairs(split, splitWidth) : null;
+  const rows = pairs ? examine(split.map(({ row }) => joinHeadRow(row, pairs))) : split;
+  const width = pairs ? (splitWidth + pairs.from) / 2 : splitWidth;
   const header = findHeader(rows, width);
   const first = header === null ? firstDataRow(rows, width) : header + 1;
   const unitsAt = header !== null && isUnitsRow(rows[first]) ? first : null;
@@ -48,6 +54,7 @@ export function findLayout(text: string, whole: boolean): Layout | null {
     headerCells: header === null ? [] : cleanHeader(rows[header]?.row.cells ?? []),
     unitCells: unitsAt === null ? [] : (rows[unitsAt]?.row.cells ?? []),
     width,
+    pairs,
     dataRows: rows.slice(from).flatMap(({ row, data }) => (data ? [row] : [])),
     preamble: rows.slice(0, header ?? first).map(({ row }) => row),
   };
@@ -121,7 +128,12 @@ function findHeader(rows: Examined[], width: number): number | null {
   };
   rows.forEach((examined, i) => {
     const unitsOfCandidate = candidate === i - 1 && isUnitsRow(examined);
-    if (!unitsOfCandidate && isHeaderLike(examined, width, kinds) && followedByData(rows, i, width)) {
+    // names may be numbers, but among rows of readings such a row is one of them that is damaged
+    const named =
+      candidate === null && count === 0
+        ? isHeaderLike({ ...examined, data: false }, width, kinds)
+        : isHeaderLike(examined, width, kinds);
+    if (!unitsOfCandidate && named && followedByData(rows, i, width)) {
       const same = candidate !== null && rows[candidate]?.row.cells.join() === examined.row.cells.join();
       if (!same) {
         settle();

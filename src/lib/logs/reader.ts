@@ -1,5 +1,6 @@
 import { concat } from './bytes';
 import { examineColumns } from './columns';
+import { joinPairs } from './decimal-pairs';
 import { detectEncoding, TextStream } from './encoding';
 import { findLayout } from './layout';
 import { preambleFacts } from './preamble';
@@ -89,7 +90,10 @@ class StreamingReader implements LogReader {
     const table = new TableReading(layout, columns, facts, plan, this.options);
     this.table = table;
     if (table.channelCount === 0) this.refusal = NO_TABLE;
-    this.splitter = new RowSplitter(layout.delimiter, (row) => table.take(row));
+    const { pairs } = layout;
+    this.splitter = new RowSplitter(layout.delimiter, (row) =>
+      table.take(pairs ? joinPairs(row, pairs) : row),
+    );
   }
 
   private feed(text: string): void {

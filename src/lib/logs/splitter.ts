@@ -8,7 +8,6 @@ const MOST_QUOTED_LINES = 50;
 const SPACE = 32;
 const NEWLINE = 10;
 const RETURN = 13;
-const CELL_JOINT = '\u001f';
 
 /** A row as bounds in a text, so that no string is made for a cell. The arrays are reused: read them before returning. */
 export interface RowView {
@@ -181,7 +180,7 @@ export class RowSplitter {
 
   private emitCells(cells: string[]): void {
     const { view } = this;
-    const text = cells.join(CELL_JOINT);
+    const text = cells.join(this.delimiter);
     let at = 0;
     for (let i = 0; i < cells.length; i++) {
       const length = cells[i]?.length ?? 0;

@@ -12,7 +12,7 @@ export type TimeSource =
   | { kind: 'duration'; column: number; unit: 'h:mm:ss' | 'h:mm' | 'm:ss' }
   | { kind: 'epoch'; column: number; msPerUnit: number }
   | { kind: 'serial'; column: number; resolutionMs: number }
-  | { kind: 'elapsed'; column: number; msPerUnit: number }
+  | { kind: 'elapsed'; column: number; msPerUnit: number; decimals: number }
   | { kind: 'row' };
 
 export interface TimeChoice {
@@ -44,7 +44,7 @@ const SERIAL_DAYS = [29_600, 60_300] as const;
 export function chooseTime(columns: readonly Column[], mapping: Mapping): TimeChoice {
   const asked = columnOf(columns, mapping.timeColumn);
   const within = asked ? columns.filter((column) => column === asked || isDateOnly(column)) : columns;
-  const stamps = within.filter(isFullStamp);
+  const stamps = within.filter((column) => isFullStamp(column) && (!isConstant(column) || column === asked));
   const dates = within.filter(isDateOnly);
   const clocks = within.filter(isClockOnly);
   const epochs = within.flatMap((column) => epochOf(column) ?? []);
@@ -115,7 +115,7 @@ function withUnit(
   chosen: (source: TimeSource) => TimeChoice,
 ): TimeChoice {
   const { msPerUnit, open } = elapsedUnit(column, columns);
-  const choice = chosen({ kind: 'elapsed', column: column.index, msPerUnit });
+  const choice = chosen({ kind: 'elapsed', column: column.index, msPerUnit, decimals: column.maxDecimals });
   return { ...choice, timeColumns: [...choice.timeColumns, column.index], openUnits: open };
 }
 
@@ -132,6 +132,10 @@ export function columnOf(columns: readonly Column[], answer: string | number | u
 
 const most = (column: Column): number => 0.8 * (column.values.length - column.empty);
 const filled = (column: Column): boolean => column.values.length > column.empty;
+/** The same moment in every row: when something began, not when the row was read. */
+const isConstant = (column: Column): boolean =>
+  column.stamps.length > 2 &&
+  new Set(column.stamps.map((stamp) => `${stamp?.date?.numbers.join()} ${stamp?.clockMs}`)).size === 1;
 const isFullStamp = (column: Column): boolean =>
   filled(column) &&
   column.stamps.filter((s) => s?.date && s.clockMs !== null).length >= Math.max(1, most(column));

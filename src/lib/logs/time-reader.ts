@@ -191,8 +191,11 @@ function numberReader(
   const instant = toInstant(settings);
   const convert = (value: number): number => {
     if (source.kind === 'epoch') return Math.round(value * source.msPerUnit * 1000) / 1000;
-    if (source.kind === 'elapsed')
-      return (settings.anchorMs ?? 0) + Math.round(value * source.msPerUnit * 1000) / 1000;
+    if (source.kind === 'elapsed') {
+      const ms = Math.round(value * source.msPerUnit * 1000) / 1000;
+      const openMs = source.msPerUnit > 1000 ? source.msPerUnit * 10 ** -source.decimals : 0;
+      return (settings.anchorMs ?? 0) + wholeSecond(ms, openMs);
+    }
     return instant(serialMs(value, source.resolutionMs), NaN);
   };
   return {
@@ -210,13 +213,15 @@ function numberReader(
   };
 }
 
-/**
- * Spreadsheet days since 1899-12-30 to wall-clock ms. What the digits leave open is closed by taking the whole second within it.
- */
+/** Spreadsheet days since 1899-12-30 to wall-clock ms. */
 function serialMs(days: number, resolutionMs: number): number {
-  const ms = (days - 25_569) * DAY_MS;
+  return Math.round(wholeSecond((days - 25_569) * DAY_MS, Math.max(1, resolutionMs)));
+}
+
+/** The whole second within what the digits of a time leave open, if there is one; else the time itself. */
+function wholeSecond(ms: number, openMs: number): number {
   const second = Math.round(ms / 1000) * 1000;
-  return Math.abs(ms - second) <= Math.max(1, resolutionMs) ? second : Math.round(ms);
+  return Math.abs(ms - second) <= openMs ? second : ms;
 }
 
 function rowReader(settings: TimeSettings): TimeReader {
