@@ -1,24 +1,15 @@
-import { readFileSync } from 'node:fs';
-import { join } from 'node:path';
 import type { Page } from 'playwright-core';
 import { expect, test } from 'vitest';
-import { ROOT } from '../../db/up/root.mjs';
 import { testApp } from '../helpers/app';
 import { alive, signIn, testBrowser } from '../helpers/browser';
 import { cautionTexts, changedFrom, editorOf, figureTexts, typeInto } from '../helpers/browser-editor';
+import { firingCase } from '../helpers/browser-studio';
 
 const app = await testApp();
 const browser = testBrowser(app);
 
 /** A simulated firing with a labelled overshoot; its plan and its kiln's plate are what the pages are given below. */
-const CASE = join(ROOT, 'fixtures/logs/p02-overshoot');
-const truth = JSON.parse(readFileSync(join(CASE, 'truth.json'), 'utf8')) as {
-  readonly kiln: Readonly<Record<'name', string> & Record<string, number>>;
-  readonly profile: { readonly segments: readonly { toC: number; rateCPerH: number; holdS: number }[] };
-  readonly toleranceC: number;
-  readonly runStart: { readonly local: string };
-  readonly findings: readonly { kind: string; startS: number; endS: number; peakC: number; byC: number }[];
-};
+const truth = firingCase('p02-overshoot');
 const [overshoot] = truth.findings;
 const PROFILE = 'Printed shells, plain';
 const CLASS = 'First casting';
@@ -227,11 +218,14 @@ async function planRun(page: Page, versionUrl: string): Promise<void> {
 }
 
 async function uploadLog(page: Page): Promise<void> {
-  await page.getByLabel('Log file').setInputFiles(join(CASE, 'log.csv'));
+  await page.getByLabel('Log file').setInputFiles(truth.log);
   await page.getByText(/^5\W?376 of 5\W?376 rows read/).waitFor();
   await page.getByRole('link', { name: 'Read the run' }).click();
   await alive(page);
-  await page.getByText(/27 °C over 870 °C/).first().waitFor();
+  await page
+    .getByText(/27 °C over 870 °C/)
+    .first()
+    .waitFor();
 }
 
 async function confirmOvershoot(page: Page): Promise<void> {
