@@ -35,7 +35,11 @@ function Figure(props: {
   return (
     <div className="figure">
       <p className="figure-value num">
-        {props.change ? <span className="figure-change">{props.change}</span> : null}
+        {props.change ? (
+          <>
+            <span className="figure-change">{props.change}</span>{' '}
+          </>
+        ) : null}
         <span data-hot={props.hot || undefined}>{props.value}</span>
       </p>
       <p className="figure-note">{props.note}</p>
