@@ -20,7 +20,11 @@ const LOOKS = [
 type Look = (typeof LOOKS)[number];
 type Visits = Partial<Record<DemoKey, readonly string[]>>;
 
-async function faultsOf(visits: Visits, { name: _name, ...options }: Look): Promise<string[]> {
+/** At night a page has other colours and is otherwise the same. */
+const judgedBy = (look: Look) => (look.colorScheme === 'dark' ? 'colours' : 'all');
+
+async function faultsOf(visits: Visits, look: Look): Promise<string[]> {
+  const { name: _name, ...options } = look;
   const found: string[] = [];
   for (const [who, paths] of Object.entries(visits) as [DemoKey, readonly string[]][]) {
     const { page } = await browser.openAs(who, options);
@@ -28,9 +32,10 @@ async function faultsOf(visits: Visits, { name: _name, ...options }: Look): Prom
       const answer = await page.goto(path, { waitUntil: 'load' });
       await page.waitForFunction(() => !document.querySelector('astro-island[client="load"][ssr]'));
       if (answer?.status() !== 200) found.push(`${who} ${path}: ${String(answer?.status())}`);
+      if ((await page.locator('h1').count()) !== 1) found.push(`${who} ${path}: not one heading of level 1`);
       const sideways = await overflowPx(page);
       if (sideways > 0) found.push(`${who} ${path}: ${sideways} px wider than the window`);
-      found.push(...(await axeFaults(page)).map((fault) => `${who} ${path}: ${fault}`));
+      found.push(...(await axeFaults(page, judgedBy(look))).map((fault) => `${who} ${path}: ${fault}`));
     }
   }
   return found;
@@ -132,7 +137,7 @@ async function demoPages(furnaceId: string): Promise<Visits> {
       '/',
       '/account',
       '/materials',
-      ...['/kilns', '/kilns/new', `/kilns/${kiln}`, `/kilns/${kiln}/edit`],
+      ...['/kilns', '/kilns?archived=yes', '/kilns/new', `/kilns/${kiln}`, `/kilns/${kiln}/edit`],
       ...['/furnaces', '/furnaces/new', `/furnaces/${furnaceId}`],
       ...['/thermocouples', '/thermocouples/new', `/thermocouples/${thermocouple}`],
       ...['/tariffs', '/tariffs/new', `/tariffs/${tariff}`],

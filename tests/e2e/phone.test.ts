@@ -48,7 +48,7 @@ test('on a phone a card of the upright strip is tapped, changed and kept', async
   await page.getByRole('link', { name: 'Shell', exact: true }).tap();
   await alive(page);
   const editor = editorOf(page);
-  const card = page.getByRole('button', { name: /^Segment 2, vitrification, to 870 °C, change/ });
+  const card = page.getByRole('button', { name: /^Change segment 2:.*870/ });
   await card.waitFor();
   await expectUpright(page);
   found.push(...(await faultsOf(page, 'editor')));
@@ -61,7 +61,7 @@ test('on a phone a card of the upright strip is tapped, changed and kept', async
   await editor.field('Target', 2).press('Enter');
   await sheet.getByLabel('attended').tap();
   await sheet.getByRole('button', { name: 'Close' }).tap();
-  await page.getByRole('button', { name: /^Segment 2, vitrification, to 845 °C/ }).waitFor();
+  await page.getByRole('button', { name: /^Change segment 2:.*845/ }).waitFor();
   await editor.saved.waitFor();
   expect((await keptVersion(app, draft)).profile.segments[1]).toMatchObject({ toC: 845, attended: true });
 
@@ -74,7 +74,7 @@ test('on a phone a card of the upright strip is tapped, changed and kept', async
 /** Time runs downwards: each card begins beneath the one before it. */
 async function expectUpright(page: Page): Promise<void> {
   const tops: number[] = [];
-  for (const card of await page.getByRole('button', { name: /^Segment \d+, .* change$/ }).all())
+  for (const card of await page.getByRole('button', { name: /^Change segment \d/ }).all())
     tops.push((await card.boundingBox())?.y ?? NaN);
   expect(tops.length).toBe(3);
   expect(tops).toEqual([...tops].sort((a, b) => a - b));

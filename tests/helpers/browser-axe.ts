@@ -6,6 +6,8 @@ import { ROOT } from '../../db/up/root.mjs';
 const SOURCE = readFileSync(join(ROOT, 'node_modules/axe-core/axe.min.js'), 'utf8');
 const TAGS = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'];
 
+const COLOUR_RULES = ['color-contrast', 'link-in-text-block'];
+
 interface AxeResult {
   readonly id: string;
   readonly help: string;
@@ -15,14 +17,20 @@ interface Axe {
   run(context: Document, options: object): Promise<{ violations: AxeResult[] }>;
 }
 
-/** What axe finds wrong with the page as it stands, one line for each place. WCAG 2.2 AA and best practice. */
-export async function axeFaults(page: Page): Promise<string[]> {
+/**
+ * What axe finds wrong with the page as it stands, one line for each place: WCAG 2.2 AA and best practice, or only what
+ * colours decide.
+ */
+export async function axeFaults(page: Page, what: 'all' | 'colours' = 'all'): Promise<string[]> {
   if (!(await page.evaluate(() => 'axe' in window))) await page.evaluate(SOURCE);
-  const violations = await page.evaluate(async (tags) => {
-    const { axe } = window as unknown as { axe: Axe };
-    const runOnly = { type: 'tag', values: tags };
-    return (await axe.run(document, { runOnly, resultTypes: ['violations'] })).violations;
-  }, TAGS);
+  const runOnly = what === 'all' ? { type: 'tag', values: TAGS } : { type: 'rule', values: COLOUR_RULES };
+  const violations = await page.evaluate(
+    async (options) => {
+      const { axe } = window as unknown as { axe: Axe };
+      return (await axe.run(document, options)).violations;
+    },
+    { runOnly, resultTypes: ['violations'] },
+  );
   return violations.flatMap(({ id, help, nodes }) =>
     nodes.map(
       (node) =>

@@ -30,7 +30,7 @@ export async function watch(page: Page): Promise<Watched> {
   await page.exposeFunction('tellOfViolation', (text: string) => tell(`content security policy: ${text}`));
   await page.addInitScript(() => {
     document.addEventListener('securitypolicyviolation', (event) => {
-      const told = (window as unknown as { tellOfViolation(text: string): void }).tellOfViolation;
+      const told = (window as unknown as { tellOfViolation: (text: string) => void }).tellOfViolation;
       told(`${event.violatedDirective} ${event.blockedURI} ${event.sourceFile}:${event.lineNumber}`);
     });
   });
