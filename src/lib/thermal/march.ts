@@ -225,7 +225,8 @@ export class March {
   /** A shorter step where the kiln saturates, comes back to its set point or lets the programmer go on; null: nothing happens. */
   #interrupted(stepS: number, free: boolean, waiting: boolean, endS: number): number | null {
     if (this.mode === 'follow') return this.#saturates(stepS);
-    if (waiting) return this.#resumes(stepS, endS);
+    const resumesS = waiting ? this.#resumes(stepS, endS) : null;
+    if (resumesS !== null) return resumesS;
     const startC = this.#gapNow(free);
     const endC = this.#gapAtEnd(stepS, free);
     const beyondC = this.mode === 'full' ? endC : -endC;
@@ -273,9 +274,12 @@ export class March {
   }
 
   #isWaiting(free: boolean): boolean {
-    const { bandC, gaveUp, clockS } = this.programmer;
+    const { bandC, gaveUp, clockS, doing } = this.programmer;
     if (free || bandC === null || gaveUp || this.mode === 'follow') return false;
-    return Math.abs(setPointC(this.programmer, clockS) - this.#readingC) >= bandC - LANDED_C;
+    const aheadC = setPointC(this.programmer, clockS) - this.#readingC;
+    const lagC = this.mode === 'full' ? aheadC : -aheadC;
+    // On a ramp the clock keeps the lag at the very band; in a hold it runs again once the kiln is inside.
+    return lagC >= bandC + (doing === 'hold' ? LANDED_C : -LANDED_C);
   }
 
   /** Chamber above what it makes for, at the beginning of the step and at its end, K. */

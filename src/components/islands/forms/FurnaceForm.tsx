@@ -13,6 +13,7 @@ import {
   type FurnaceSent,
   type FurnaceTyped,
 } from './furnace-form';
+import { PostForm } from './PostForm';
 import { SaveBar } from './SaveBar';
 import { useSaving } from './use-saving';
 
@@ -83,11 +84,7 @@ export default function FurnaceForm(given: FurnaceFormProps) {
     ...props.tariffs.map((tariff) => ({ value: tariff.id, text: tariff.name })),
   ];
   return (
-    <form
-      method="post"
-      noValidate
-      onSubmit={(event) => void handleSubmit((typed) => saving.submit(schema.parse(typed)))(event)}
-    >
+    <PostForm onSubmit={handleSubmit((typed) => saving.submit(schema.parse(typed)))}>
       <Part title="Name">
         <div className="sm:col-span-2">
           <WordsField form={form} name="name" label="What the studio calls it" maxLength={120} />
@@ -107,6 +104,6 @@ export default function FurnaceForm(given: FurnaceFormProps) {
         button={furnace ? 'Save the furnace' : 'Add the furnace'}
         cancelHref="/furnaces"
       />
-    </form>
+    </PostForm>
   );
 }

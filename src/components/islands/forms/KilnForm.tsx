@@ -14,6 +14,7 @@ import {
   type KilnTyped,
 } from './kiln-form';
 import { LiningLayers } from './LiningLayers';
+import { PostForm } from './PostForm';
 import { SaveBar } from './SaveBar';
 import { useSaving } from './use-saving';
 
@@ -189,11 +190,7 @@ export default function KilnForm(given: KilnFormProps) {
     return `/kilns/${saved.id}?done=${kiln ? 'saved' : 'added'}`;
   });
   return (
-    <form
-      method="post"
-      noValidate
-      onSubmit={(event) => void handleSubmit((typed) => saving.submit(schema.parse(typed)))(event)}
-    >
+    <PostForm onSubmit={handleSubmit((typed) => saving.submit(schema.parse(typed)))}>
       <Part title="Name">
         <div className="sm:col-span-2">
           <WordsField form={form} name="name" label="What the studio calls it" maxLength={120} />
@@ -227,6 +224,6 @@ export default function KilnForm(given: KilnFormProps) {
         button={kiln ? 'Save the kiln' : 'Add the kiln'}
         cancelHref={kiln ? `/kilns/${kiln.id}` : '/kilns'}
       />
-    </form>
+    </PostForm>
   );
 }

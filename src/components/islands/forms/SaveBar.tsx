@@ -1,8 +1,4 @@
-import { useSyncExternalStore } from 'react';
-
-const never = () => () => undefined;
-
-/** The end of a form: what went wrong, the button, and a way out. Before the script has loaded the button waits. */
+/** The end of a form: what went wrong, the button, and a way out. */
 export function SaveBar(props: {
   readonly problem: string | null;
   readonly faults: number;
@@ -11,18 +7,13 @@ export function SaveBar(props: {
   readonly cancelHref: string;
 }) {
   const { problem, faults, busy, button, cancelHref } = props;
-  const ready = useSyncExternalStore(
-    never,
-    () => true,
-    () => false,
-  );
   const counted = `${faults} ${faults === 1 ? 'field needs' : 'fields need'} another look.`;
   const told = problem ?? (faults > 0 ? counted : null);
   return (
     <div className="border-t border-line pt-5">
       <div role="alert">{told && <p className="notice notice-hot mb-4 font-medium">{told}</p>}</div>
       <div className="flex flex-wrap gap-2.5">
-        <button type="submit" className="btn btn-primary" disabled={busy || !ready}>
+        <button type="submit" className="btn btn-primary" disabled={busy}>
           {busy ? 'Saving' : button}
         </button>
         <a className="btn" href={cancelHref}>

@@ -6,6 +6,7 @@ import { call } from '~/lib/client/api';
 import { tariffRoutes } from '~/lib/contracts/equipment';
 import { METRIC } from '~/lib/units';
 import { ChoiceField, Part, QuantityField, SwitchField, WordsField, type FormTools } from './fields';
+import { PostForm } from './PostForm';
 import { SaveBar } from './SaveBar';
 import { TariffBands } from './TariffBands';
 import {
@@ -81,11 +82,7 @@ export default function TariffForm(given: TariffFormProps) {
     return `/tariffs?done=${tariff ? 'saved' : 'added'}`;
   });
   return (
-    <form
-      method="post"
-      noValidate
-      onSubmit={(event) => void handleSubmit((typed) => saving.submit(tariffFormSchema.parse(typed)))(event)}
-    >
+    <PostForm onSubmit={handleSubmit((typed) => saving.submit(tariffFormSchema.parse(typed)))}>
       <Part title="Name">
         <div className="sm:col-span-2">
           <WordsField form={form} name="name" label="What the studio calls it" maxLength={120} />
@@ -110,6 +107,6 @@ export default function TariffForm(given: TariffFormProps) {
         button={tariff ? 'Save the tariff' : 'Add the tariff'}
         cancelHref="/tariffs"
       />
-    </form>
+    </PostForm>
   );
 }

@@ -6,6 +6,7 @@ import { call } from '~/lib/client/api';
 import { thermocoupleInputSchema, thermocoupleRoutes } from '~/lib/contracts/equipment';
 import { TOLERANCE_NAMES } from '../../words/names';
 import { ChoiceField, Part, QuantityField, WordsField, type FormTools } from './fields';
+import { PostForm } from './PostForm';
 import { SaveBar } from './SaveBar';
 import {
   thermocoupleFormPropsSchema,
@@ -80,11 +81,7 @@ export default function ThermocoupleForm(given: ThermocoupleFormProps) {
     return `/thermocouples?done=${thermocouple ? 'saved' : 'added'}`;
   });
   return (
-    <form
-      method="post"
-      noValidate
-      onSubmit={(event) => void handleSubmit((typed) => saving.submit(schema.parse(typed)))(event)}
-    >
+    <PostForm onSubmit={handleSubmit((typed) => saving.submit(schema.parse(typed)))}>
       <Part title="What it is">
         <WordsField form={form} name="name" label="What the studio calls it" maxLength={120} />
         <ChoiceField form={form} name="type" label="Type" options={TYPES} />
@@ -111,6 +108,6 @@ export default function ThermocoupleForm(given: ThermocoupleFormProps) {
         button={thermocouple ? 'Save the thermocouple' : 'Add the thermocouple'}
         cancelHref="/thermocouples"
       />
-    </form>
+    </PostForm>
   );
 }

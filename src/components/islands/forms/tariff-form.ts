@@ -1,4 +1,4 @@
-import type { tariffInputSchema} from '~/lib/contracts/equipment';
+import type { tariffInputSchema } from '~/lib/contracts/equipment';
 import { tariffSchema, type Tariff } from '~/lib/contracts/equipment';
 import { priceSchema, tariffPlanSchema } from '~/lib/planning/tariff-schema';
 import { METRIC } from '~/lib/units';

@@ -5,7 +5,7 @@ import type { StripScales } from '../strip/scales';
 import { FindingCard, type FindingCardProps } from './FindingCard';
 import { anchorOf } from './view';
 
-const CARD = { widthPx: 196, gapPx: 10, heightPx: 72 };
+const CARD = { widthPx: 196, gapPx: 10, heightPx: 104 };
 const LEADER_PX = 34;
 
 /** Length of strip that the cards of so many findings need. */
