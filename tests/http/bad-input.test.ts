@@ -127,7 +127,7 @@ describe('a body that is not what it should be', () => {
       .post('/api/kilns')
       .set('Content-Type', 'application/json')
       .serialize((x) => x as string)
-      .send(bytes as unknown as object);
+      .send(bytes);
     expectProblem(answer, 400);
   });
 });

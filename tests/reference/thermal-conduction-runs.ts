@@ -246,7 +246,7 @@ export function wallStepRun(spoil: Spoil = {}): number {
       },
     });
   }
-  return worstOfColumnRange(rows as number[][], computed, [2, 3, 4]) / tolerance.ofColumnRange;
+  return worstOfColumnRange(rows, computed, [2, 3, 4]) / tolerance.ofColumnRange;
 }
 
 /** H11: the dry front moving into a wet slab held at 100 °C, its depth read from the water that is gone. */

@@ -48,7 +48,7 @@ describe('above what a material stands', () => {
   });
 
   it('goes by the studio’s own figure', () => {
-    const load = { moulds: [{ ...shell.moulds[0]!, overrides: { maxC: 900 } }] };
+    const load = { moulds: shell.moulds.map((mould) => ({ ...mould, overrides: { maxC: 900 } })) };
     expect(found({ profile: to(950), load }, 'above-material-limit')[0]?.source).toContain('own figure');
   });
 

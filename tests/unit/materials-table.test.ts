@@ -37,7 +37,7 @@ const everyProperty = Object.values(materials)
     Object.entries(material.properties).map(([name, property]) => ({
       id: material.id,
       name,
-      property: property as Property,
+      property: property,
     })),
   );
 

@@ -178,7 +178,7 @@ async function seedRun(run: DemoRun, index: number, seeded: Seeded, now: Date): 
 }
 
 async function* bytesOf(text: string): AsyncGenerator<Uint8Array> {
-  yield new TextEncoder().encode(text);
+  yield await Promise.resolve(new TextEncoder().encode(text));
 }
 
 async function confirmFirst(runId: string, now: Date): Promise<void> {

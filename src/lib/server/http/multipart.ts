@@ -71,7 +71,7 @@ export async function receiveFile(
     );
   }
   await state.taken;
-  if (state.failure) throw state.failure;
+  if (state.failure !== null) throw asError(state.failure);
   if (!state.taken) throw new HoldfastError('malformed', "The upload holds no part named 'file'.");
   return fields;
 }
@@ -100,6 +100,10 @@ const tooLarge = (maxBytes: number) =>
     'too-large',
     `The file is larger than the ${Math.floor(maxBytes / 1024 / 1024)} MiB taken here. Split it, or export it at a longer interval.`,
   );
+
+/** What is caught may be anything; what is thrown on is an error. */
+const asError = (caught: unknown): Error =>
+  caught instanceof Error ? caught : new Error('an upload failed', { cause: caught });
 
 /** The last part of the name, without control characters: kept for people to recognise, never used as a path. */
 function plainFileName(name: string | undefined): string {
