@@ -5,7 +5,9 @@ import { cautionsOf } from '~/lib/thermal/cautions';
 import { estimateOf } from '~/lib/thermal/estimate';
 import type { Estimate } from '~/lib/thermal/estimate-schema';
 import { loadSchema } from '~/lib/thermal/load-schema';
-import { simulate } from '~/lib/thermal/simulate';
+import { FiringTooStiff } from '~/lib/thermal/march';
+import { simulate, type FiringInput } from '~/lib/thermal/simulate';
+import type { Simulation } from '~/lib/thermal/simulation';
 import type { UnitPreferences } from '~/lib/units';
 import type { ProfileDocument } from './document';
 
@@ -27,7 +29,7 @@ const EMPTY_LOAD = loadSchema.parse({});
 /**
  * What the models say of a document: the same simulation, cautions and prices that the server computes for the record.
  *
- * @returns null where no kiln is chosen or the plan is longer than a profile may be
+ * @returns null where no kiln is chosen, the plan is longer than a profile may be, or it cannot be computed
  */
 function estimateDocument(
   document: ProfileDocument,
@@ -37,7 +39,8 @@ function estimateDocument(
   if (!kiln || issuesOf(document.profile).length > 0) return null;
   const { profile } = document;
   const load = document.load ?? EMPTY_LOAD;
-  const simulation = simulate({ profile, kiln, load, ambientC: around.ambientC });
+  const simulation = simulatedOrNull({ profile, kiln, load, ambientC: around.ambientC });
+  if (!simulation) return null;
   const offsetMinutesAt = zoneOffset(around.zone);
   const thermocouple = around.thermocouples.find((candidate) => candidate.id === kiln.thermocoupleId) ?? null;
   const cautions = cautionsOf(simulation, {
@@ -55,6 +58,16 @@ function estimateDocument(
     ...co2Only(co2Of(fuel, simulation.energy.inKWh, plan)),
     cost: plan ? costOf(plan, simulation, around.startMs, offsetMinutesAt).cost : null,
   };
+}
+
+/** Null where kiln and load are so far from any real ones that they would hold the page up. */
+function simulatedOrNull(input: FiringInput): Simulation | null {
+  try {
+    return simulate(input);
+  } catch (error) {
+    if (error instanceof FiringTooStiff) return null;
+    throw error;
+  }
 }
 
 /** The model with what surrounds it. */

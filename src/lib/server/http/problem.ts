@@ -1,5 +1,5 @@
 import type { z } from '~/lib/zod';
-import type { HoldfastError} from '../errors';
+import type { HoldfastError } from '../errors';
 import { PROBLEMS, type Issue } from '../errors';
 
 /** The one place where an error becomes an answer: problem details of RFC 9457, never a stack trace. */

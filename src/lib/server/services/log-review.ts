@@ -6,11 +6,12 @@ import type { AlignmentRequest, ComputedFinding, ReviewChannel, ReviewResult } f
 import { toCelsius } from '~/lib/logs/celsius';
 import { sensorRangeC } from '~/lib/sensors/range';
 import { toleranceC } from '~/lib/sensors/tolerance';
-import { estimate } from '~/lib/thermal/estimate';
+import { estimateOf } from '~/lib/thermal/estimate';
 import type { Estimate } from '~/lib/thermal/estimate-schema';
 import type { StoredAlignment, StoredReport, StoredReview } from '../repositories/logs';
 import type { NewFinding } from '../repositories/findings';
 import type { Frozen } from '../repositories/runs';
+import { simulated } from './firing';
 
 /** The rows of a log as read, by channel of its report, in the file's own units. */
 export interface LogSeries {
@@ -28,7 +29,10 @@ export interface Reviewed {
 
 /** The prediction that a run is reviewed against: what its kiln and load should have done with its profile. */
 export const predictionOf = (frozen: Frozen): Estimate =>
-  estimate({ profile: frozen.profile, kiln: frozen.kiln, load: frozen.load, ambientC: 20 });
+  estimateOf(simulated({ profile: frozen.profile, kiln: frozen.kiln, load: frozen.load, ambientC: 20 }), {
+    mouldIndex: null,
+    cautions: [],
+  });
 
 /** Lays a log over its plan and finds the deviations. Pure: stores nothing. */
 export function reviewLog(input: {
