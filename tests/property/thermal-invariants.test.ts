@@ -31,12 +31,7 @@ function breaches({
   for (let i = 0; i < timeS.length; i++) {
     const power = powerKW[i] ?? NaN;
     hottestC = Math.max(hottestC, chamberC[i] ?? NaN);
-    // The solver keeps to full power within 0.1 %; what is beyond is rounding of doubles.
-    worst.overPower = Math.max(
-      worst.overPower,
-      power / fullPowerKW - 1.001 - 1e-9,
-      -power / fullPowerKW - 1e-9,
-    );
+    worst.overPower = Math.max(worst.overPower, power / fullPowerKW - 1 - 1e-8, -power / fullPowerKW - 1e-8);
     if (i > 0 && !((timeS[i] ?? NaN) > (timeS[i - 1] ?? NaN))) worst.backwardsS = 1;
     for (const { surfaceC, coreC, waterKg, patternLeftShare } of moulds) {
       // No part of a mould is ever hotter than the chamber has been, nor colder than the room.
@@ -53,14 +48,19 @@ function breaches({
   return worst;
 }
 
+const FIRINGS = 500;
+/** Lets the test runner hear of the worker between two firings. */
+const breathe = () => new Promise((resolve) => setImmediate(resolve));
+
 describe('a firing, whatever the kiln, the load and the profile', () => {
-  it('closes its energy to 0.1 %, keeps within its power, lets no heat run uphill and no mass grow or go below zero', () => {
-    fc.assert(
-      fc.property(profiles, kilns, loads, (profile, kiln, load) => {
+  it('closes its energy to 0.1 %, keeps within its power, lets no heat run uphill and no mass grow or go below zero', async () => {
+    await fc.assert(
+      fc.asyncProperty(profiles, kilns, loads, async (profile, kiln, load) => {
+        await breathe();
         const broken = breaches(simulate({ profile, kiln, load, ambientC: AMBIENT_C }));
         for (const [law, by] of Object.entries(broken)) expect(by, law).toBeLessThanOrEqual(0);
       }),
-      { numRuns: 500, seed: 20260101 },
+      { numRuns: FIRINGS, seed: 20260101 },
     );
   }, 300_000);
 

@@ -241,10 +241,12 @@ export class March {
 
   /** In follow: the kiln would need more than it has, or less than nothing. */
   #saturates(stepS: number): number | null {
-    const { trial, firing } = this.chamber;
+    const { trial, firing, tempC } = this.chamber;
     const fullW = firing.fullHeatW(trial.endC);
-    const over = trial.endHeatW - fullW;
-    const under = -trial.endHeatW;
+    // Both the end of the step and its mean must be within what the kiln has: right after a corner the need falls fast.
+    const meanOver = trial.meanHeatW - firing.fullHeatW((tempC + trial.endC) / 2);
+    const over = Math.max(trial.endHeatW - fullW, meanOver);
+    const under = -Math.min(trial.endHeatW, trial.meanHeatW);
     if (over <= 1e-9 * fullW && under <= 1e-9 * fullW) return null;
     const limitW = over > 0 ? fullW : 0;
     const roomW = this.#fresh ? 0 : Math.abs(limitW - this.#endHeatW);
@@ -253,7 +255,7 @@ export class March {
       return stepS;
     }
     if (this.#fresh) return PROBE_S;
-    return stepS * Math.min(0.95, Math.max(0.02, roomW / (roomW + Math.abs(trial.endHeatW - limitW))));
+    return stepS * Math.min(0.95, Math.max(0.02, roomW / (roomW + Math.max(over, under))));
   }
 
   /** While the programmer waits: the moment at which its clock goes on to the end of the ramp, or runs again in a hold. */
