@@ -24,7 +24,7 @@ const PER_BIN = 1 / BIN_C;
 /** Conductances and heat capacities for a step, at the temperatures foreseen for its middle. */
 export function prepareBody(body: Body, stepS: number, chamberMiddleC: number): void {
   foresee(body, stepS, chamberMiddleC);
-  setLinks(body, chamberMiddleC);
+  setLinks(body, stepS, chamberMiddleC);
   setStores(body, 1 / (GAMMA * stepS));
 }
 
@@ -35,7 +35,7 @@ function foresee(body: Body, stepS: number, chamberMiddleC: number): void {
   if (body.first === 1) middleC[0] = chamberMiddleC;
 }
 
-function setLinks(body: Body, chamberMiddleC: number): void {
+function setLinks(body: Body, stepS: number, chamberMiddleC: number): void {
   const { middleC, link, conductivity, conductivityStart, nodes } = body;
   const shapeM = body.grid.shapeM;
   for (let i = 1; i < nodes; i++) {
@@ -45,7 +45,7 @@ function setLinks(body: Body, chamberMiddleC: number): void {
     const low = conductivity[index]!;
     link[i] = shapeM[i]! * (low + (conductivity[index + 1]! - low) * (at - bin));
   }
-  if (body.wet && body.wetWPerMK !== 0) addWetConductance(body);
+  if (body.wet && body.wetWPerMK !== 0) addWetConductance(body, stepS);
   if (body.exchange !== null) setFaceLink(body, body.exchange, chamberMiddleC);
   if (body.roomFilm) link[nodes] = body.farM2 * body.roomFilm.at(middleC[nodes - 1]!);
 }
@@ -65,11 +65,15 @@ function setFaceLink(body: Body, exchange: Float64Array, chamberMiddleC: number)
   body.link[0] = body.faceM2 * (convection + factor * radiation);
 }
 
-function addWetConductance(body: Body): void {
-  const { latentJ, fullLatentJ, link, nodes, wetWPerMK } = body;
-  for (let i = 1; i < nodes; i++) {
-    const share = (latentJ[i - 1]! / fullLatentJ[i - 1]! + latentJ[i]! / fullLatentJ[i]!) / 2;
-    link[i] = link[i]! + body.grid.shapeM[i]! * wetWPerMK * share;
+/** What the water adds to conduction, by the water foreseen at the middle of the step. */
+function addWetConductance(body: Body, stepS: number): void {
+  const { latentJ, boilingW, fullLatentJ, link, nodes, wetWPerMK } = body;
+  let before = 0;
+  for (let i = 0; i < nodes; i++) {
+    const leftJ = latentJ[i]! - (boilingW[i]! * stepS) / 2;
+    const share = leftJ > 0 ? leftJ / fullLatentJ[i]! : 0;
+    if (i > 0) link[i] = link[i]! + (body.grid.shapeM[i]! * wetWPerMK * (before + share)) / 2;
+    before = share;
   }
 }
 
@@ -157,7 +161,7 @@ export function substituteLast(body: Body, chamberC: number, stepS: number): num
   let most = 0;
   for (let i = body.first; i < nodes; i++) {
     const off = Math.abs(stageC[i]! - tempC[i]! - rateCPerS[i]! * stepS);
-    if (off > most) most = off;
+    if (off > most && body.latentJ[i]! === 0) most = off;
   }
   body.surpriseC = most;
   return outW;
@@ -175,8 +179,11 @@ export function commitBody(body: Body, stepS: number): void {
     const heatJ = oneS * stageOneW[i]! + twoS * stageTwoW[i]!;
     const fromC = tempC[i]!;
     let toC: number;
-    if (special) toC = warmWithReactions(body, i, heatJ);
-    else {
+    if (special) {
+      const wasJ = body.latentJ[i]!;
+      toC = warmWithReactions(body, i, heatJ);
+      body.boilingW[i] = (wasJ - body.latentJ[i]!) * perS;
+    } else {
       const bin = ((fromC - TABLE_FROM_C) * PER_BIN) | 0;
       const lowC = TABLE_FROM_C + bin * BIN_C;
       toC = fromC + heatJ / (volumeM3[i]! * capacity[capacityStart[i]! + bin]!);

@@ -42,6 +42,8 @@ export interface Body {
   /** Highest temperature each node has been at, °C: reactions run once. */
   readonly peakC: Float64Array;
   readonly latentJ: Float64Array;
+  /** Mean heat that evaporated water over the last step, W. */
+  readonly boilingW: Float64Array;
   wet: boolean;
   /** Some node has not yet been through all reactions. */
   reacting: boolean;
@@ -138,6 +140,7 @@ export function bodyOf(properties: BodyProperties): Body {
     rateCPerS: zeros(),
     peakC: zeros().fill(properties.startC),
     latentJ: fullLatentJ.slice(),
+    boilingW: zeros(),
     wet: latentJPerM3 > 0,
     reacting: properties.reactions.length > 0,
     surpriseC: 0,
