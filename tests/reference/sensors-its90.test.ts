@@ -109,7 +109,7 @@ describe('traps of the reference functions', () => {
     }
   });
 
-  it('type K below zero: a flipped sign of c5, as in one public transcription, would break the table by far', () => {
+  it('type K below zero: a flipped sign of c5, as in one public copy, would break the table by far', () => {
     const row = table.find((entry) => entry.type === 'K' && entry.tempC === -200);
     expect(row?.mv).toBe(-5.891);
     expect(emfMv('K', -200)).toBeCloseTo(-5.891, 3);
