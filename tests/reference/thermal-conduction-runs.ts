@@ -4,6 +4,7 @@ import stefan from '../../fixtures/references/heat-stefan.json' with { type: 'js
 import wall from '../../fixtures/references/heat-wall.json' with { type: 'json' };
 import wallStep from '../../fixtures/references/heat-wall-step.json' with { type: 'json' };
 import { WATER_EVAPORATION_J_PER_KG } from '~/lib/thermal/constants';
+import { LINING_GRID } from '~/lib/thermal/resolve-kiln';
 import { waterKgOf } from '~/lib/thermal/mould-recorder';
 import type { BodyProperties } from '~/lib/thermal/properties';
 import {
@@ -43,7 +44,7 @@ export function wallRun(index: number, spoil: Spoil = {}): number {
         },
       ],
       area: [1, 0, 0],
-      grid: { kind: 'graded', firstM: 0.0015, growth: 0.14 },
+      grid: LINING_GRID,
       face: { kind: 'held' },
       far: { kind: 'room', ambientC: inputs.Tambient_C, film: inputs.h_W_m2K },
       startC: inputs.Tinitial_C,

@@ -2,6 +2,7 @@ import lumped from '../../fixtures/references/heat-lumped.json' with { type: 'js
 import steadyWall from '../../fixtures/references/heat-steady-wall.json' with { type: 'json' };
 import type { Body } from '~/lib/thermal/body';
 import { J_PER_KWH, KELVIN_AT_0_C } from '~/lib/thermal/constants';
+import { LINING_GRID } from '~/lib/thermal/resolve-kiln';
 import type { BodyProperties, LayerProperties } from '~/lib/thermal/properties';
 import {
   BOUNDLESS_J_PER_K,
@@ -132,7 +133,7 @@ function steady(
     {
       ...slab({ thicknessM: 1, k: 1, rhoC: 1, startC: 20, cells: 1, filmWPerM2K: 0 }),
       layers,
-      grid: { kind: 'graded', firstM: 0.0015, growth: 0.14 },
+      grid: LINING_GRID,
       face: { kind: 'held' },
       far,
     },

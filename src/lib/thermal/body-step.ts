@@ -22,16 +22,18 @@ export const CARRY = (1 - GAMMA) / GAMMA;
 const PER_BIN = 1 / BIN_C;
 
 /** Conductances and heat capacities for a step, at the temperatures foreseen for its middle. */
-export function prepareBody(body: Body, stepS: number, chamberMiddleC: number): void {
-  foresee(body, stepS, chamberMiddleC);
+export function prepareBody(body: Body, stepS: number, lastS: number, chamberMiddleC: number): void {
+  foresee(body, stepS, lastS, chamberMiddleC);
   setLinks(body, stepS, chamberMiddleC);
   setStores(body, 1 / (GAMMA * stepS));
 }
 
-function foresee(body: Body, stepS: number, chamberMiddleC: number): void {
-  const { tempC, rateCPerS, middleC, nodes } = body;
+/** Temperatures of the middle of the step, from the rates of the last two: T + Δt/2·(rate + bend·(Δt_last/2 + Δt/4)). */
+function foresee(body: Body, stepS: number, lastS: number, chamberMiddleC: number): void {
+  const { tempC, rateCPerS, bendCPerS2, middleC, nodes } = body;
   const half = stepS / 2;
-  for (let i = 0; i < nodes; i++) middleC[i] = tempC[i]! + rateCPerS[i]! * half;
+  const bent = half * (lastS / 2 + stepS / 4);
+  for (let i = 0; i < nodes; i++) middleC[i] = tempC[i]! + rateCPerS[i]! * half + bendCPerS2[i]! * bent;
   if (body.first === 1) middleC[0] = chamberMiddleC;
 }
 
@@ -154,22 +156,28 @@ export function substitute(body: Body, chamberC: number, flowsW: Float64Array): 
   return outW;
 }
 
-/** As `substitute`, for the second stage: also finds how far its temperatures lie from what the last step's rates foresaw. */
-export function substituteLast(body: Body, chamberC: number, stepS: number): number {
+/** As `substitute`, for the second stage: also finds how far its temperatures lie from what the last two steps foresaw. */
+export function substituteLast(body: Body, chamberC: number, stepS: number, lastS: number): number {
   const outW = substitute(body, chamberC, body.stageTwoW);
-  const { stageC, tempC, rateCPerS, nodes } = body;
+  const { stageC, tempC, rateCPerS, bendCPerS2, latentJ, nodes } = body;
+  const bent = (stepS * (lastS + stepS)) / 2;
   let most = 0;
   for (let i = body.first; i < nodes; i++) {
-    const off = Math.abs(stageC[i]! - tempC[i]! - rateCPerS[i]! * stepS);
-    if (off > most && body.latentJ[i]! === 0) most = off;
+    const off = Math.abs(stageC[i]! - tempC[i]! - rateCPerS[i]! * stepS - bendCPerS2[i]! * bent);
+    // What is wet moves by the plateau, which each stage solves for itself.
+    if (off > most && latentJ[i]! === 0) most = off;
   }
   body.surpriseC = most;
   return outW;
 }
 
-/** Takes the step: books the heat of both stages on every node and reads the new temperatures from it. */
-export function commitBody(body: Body, stepS: number): void {
-  const { tempC, rateCPerS, stageOneW, stageTwoW, nodes, first } = body;
+/**
+ * Takes the step: books the heat of both stages on every node and reads the new temperatures from it.
+ *
+ * @param perBendS one over the time between the middles of this step and the last; 0 where a corner lies between them
+ */
+export function commitBody(body: Body, stepS: number, perBendS: number): void {
+  const { tempC, rateCPerS, bendCPerS2, stageOneW, stageTwoW, nodes, first } = body;
   const { capacity, capacityStart, volumeM3 } = body;
   const oneS = (1 - GAMMA) * stepS;
   const twoS = GAMMA * stepS;
@@ -191,7 +199,9 @@ export function commitBody(body: Body, stepS: number): void {
         toC = temperatureAfter(capacity, capacityStart[i]!, volumeM3[i]!, fromC, heatJ);
       }
     }
-    rateCPerS[i] = (toC - fromC) * perS;
+    const rate = (toC - fromC) * perS;
+    bendCPerS2[i] = (rate - rateCPerS[i]!) * perBendS;
+    rateCPerS[i] = rate;
     tempC[i] = toC;
   }
   if (body.wet) settleDry(body);

@@ -39,6 +39,8 @@ export interface Body {
   readonly tempC: Float64Array;
   /** Mean rate over the last step, K/s. */
   readonly rateCPerS: Float64Array;
+  /** Change of that rate from the step before, K/s². */
+  readonly bendCPerS2: Float64Array;
   /** Highest temperature each node has been at, °C: reactions run once. */
   readonly peakC: Float64Array;
   readonly latentJ: Float64Array;
@@ -138,6 +140,7 @@ export function bodyOf(properties: BodyProperties): Body {
     wetWPerMK: properties.water?.addedConductivityWPerMK ?? 0,
     tempC: zeros().fill(properties.startC),
     rateCPerS: zeros(),
+    bendCPerS2: zeros(),
     peakC: zeros().fill(properties.startC),
     latentJ: fullLatentJ.slice(),
     boilingW: zeros(),

@@ -42,7 +42,8 @@ export function tryHeld(chamber: Chamber, stepS: number, endC: number): void {
 export function tryPowered(chamber: Chamber, stepS: number, share: number): void {
   const { trial, capacity, tempC } = chamber;
   const stageS = GAMMA * stepS;
-  const middleC = tempC + (chamber.rateCPerS * stepS) / 2;
+  const { rateCPerS, bendCPerS2, lastS } = chamber;
+  const middleC = tempC + (stepS / 2) * (rateCPerS + bendCPerS2 * (lastS / 2 + stepS / 4));
   prepare(chamber, stepS, middleC);
   const heatW = share === 0 ? 0 : share * chamber.firing.fullHeatW(middleC);
   const store = (capacity[binOf(middleC)] ?? 0) / stageS;
@@ -56,15 +57,21 @@ export function tryPowered(chamber: Chamber, stepS: number, share: number): void
   trial.endHeatW = heatW;
   trial.meanHeatW = heatW;
   finish(chamber, stepS, middleC);
-  trial.surpriseC = Math.max(trial.surpriseC, Math.abs(trial.endC - tempC - chamber.rateCPerS * stepS));
+  const foreseenC = tempC + stepS * (rateCPerS + (bendCPerS2 * (lastS + stepS)) / 2);
+  trial.surpriseC = Math.max(trial.surpriseC, Math.abs(trial.endC - foreseenC));
 }
 
-/** Takes the step last tried and books its heat. */
-export function takeStep(chamber: Chamber): void {
+/**
+ * Takes the step last tried and books its heat.
+ *
+ * @param afterCorner the rates of the step before say nothing of this one's
+ */
+export function takeStep(chamber: Chamber, afterCorner = false): void {
   const { trial, booked, bodies, ambientC, ventWPerK } = chamber;
   const { stepS, endC, stageOneC, stageTwoC } = trial;
+  const perBendS = afterCorner ? 0 : 2 / (stepS + chamber.lastS);
   for (const body of bodies) {
-    commitBody(body, stepS);
+    commitBody(body, stepS, perBendS);
     if (body.first === 1) body.tempC[0] = endC;
     booked.farJ += stepS * body.count * (ONE * body.farOneW + GAMMA * body.farTwoW);
   }
@@ -72,13 +79,16 @@ export function takeStep(chamber: Chamber): void {
   booked.sourceJ += stepS * chamber.sourceW;
   booked.heatJ += stepS * trial.meanHeatW;
   booked.inputJ += stepS * trial.meanHeatW * trial.inputPerHeat;
-  chamber.rateCPerS = (endC - chamber.tempC) / stepS;
+  const rateCPerS = (endC - chamber.tempC) / stepS;
+  chamber.bendCPerS2 = (rateCPerS - chamber.rateCPerS) * perBendS;
+  chamber.rateCPerS = rateCPerS;
+  chamber.lastS = stepS;
   chamber.tempC = endC;
 }
 
 function prepare(chamber: Chamber, stepS: number, middleC: number): void {
   chamber.ventWPerK = chamber.airKgPerS * meanAirHeatCapacityJPerKgK(middleC);
-  for (const body of chamber.bodies) prepareBody(body, stepS, middleC);
+  for (const body of chamber.bodies) prepareBody(body, stepS, chamber.lastS, middleC);
 }
 
 function finish(chamber: Chamber, stepS: number, middleC: number): void {
@@ -112,7 +122,7 @@ function solveStage(
     let changed = false;
     for (const body of bodies) {
       if (!body.wet) continue;
-      settle(body, chamberC, carry, stageS);
+      settle(body, chamberC, carry, stageS, chamber.lastS);
       if (phasesChanged(body, carry, stageS, carry === 0 ? body.stageOneW : body.stageTwoW)) {
         eliminate(body, carry, stageS);
         changed = true;
@@ -121,7 +131,7 @@ function solveStage(
     if (!changed) break;
     chamberC = knownC ?? balanceC(chamber, carry, store, heatW);
   }
-  for (const body of bodies) settle(body, chamberC, carry, stageS);
+  for (const body of bodies) settle(body, chamberC, carry, stageS, chamber.lastS);
   return chamberC;
 }
 
@@ -140,9 +150,9 @@ function balanceC(chamber: Chamber, carry: number, store: number, heatW: number)
   return drive / slope;
 }
 
-function settle(body: Body, chamberC: number, carry: number, stageS: number): void {
+function settle(body: Body, chamberC: number, carry: number, stageS: number, lastS: number): void {
   if (carry === 0) body.farOneW = substitute(body, chamberC, body.stageOneW);
-  else body.farTwoW = substituteLast(body, chamberC, stageS / GAMMA);
+  else body.farTwoW = substituteLast(body, chamberC, stageS / GAMMA, lastS);
 }
 
 /** Heat that the node loses to bodies and vent, less what is released inside it, W. */

@@ -19,6 +19,9 @@ export interface Chamber {
   readonly capacity: Float64Array;
   tempC: number;
   rateCPerS: number;
+  bendCPerS2: number;
+  /** Length of the last step, s. */
+  lastS: number;
   /** Air that comes in cold and leaves at the chamber's temperature, kg/s. */
   airKgPerS: number;
   /** The same as a conductance to the room, set for each step, W/K. */
@@ -84,6 +87,8 @@ export function chamberOf(
     capacity,
     tempC: settings.startC,
     rateCPerS: 0,
+    bendCPerS2: 0,
+    lastS: 0,
     airKgPerS: 0,
     ventWPerK: 0,
     sourceW: 0,

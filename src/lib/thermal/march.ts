@@ -20,7 +20,7 @@ export interface StepSettings {
   fixedS: number | null;
 }
 
-export const DEFAULT_STEPS: StepSettings = { toleranceC: 1, mostS: 600, fixedS: null };
+export const DEFAULT_STEPS: StepSettings = { toleranceC: 1.5, mostS: 600, fixedS: null };
 
 /** Whether the kiln is on its set point, or at full fire below it, or off above it. */
 export type Mode = 'follow' | 'full' | 'off';
@@ -50,6 +50,7 @@ const PROBE_S = 0.25;
 const LANDED_C = 1e-3;
 const ARRIVED_C = 0.01;
 const MOST_TRIES = 60;
+const MOST_CUTS = 4;
 /** Longest step of the cooling after the end, of which only the opening is asked, s. */
 const COOLING_MOST_S = 3600;
 
@@ -69,6 +70,10 @@ export class March {
   steps = 0;
   #nextS = 1;
   #fresh = true;
+  /** The step under way was found to need more than the kiln has, or less than nothing. */
+  #saturated = false;
+  /** How often it was cut short to end where the kiln saturates. */
+  #cuts = 0;
   #endHeatW = 0;
   #mostS: number;
   readonly #mostSteps: number;
@@ -130,7 +135,7 @@ export class March {
       if (shorterS === null) break;
       stepS = shorterS;
     }
-    this.#accept(stepS);
+    this.#accept(this.chamber.trial.stepS);
   }
 
   get #readingC(): number {
@@ -180,12 +185,15 @@ export class March {
     const waiting = this.#isWaiting(free);
     let stepS = settings.fixedS ?? this.#nextS;
     if (!free && !waiting) stepS = Math.min(stepS, endS - programmer.clockS);
+    this.#saturated = false;
+    this.#cuts = 0;
     for (let tries = 0; tries < MOST_TRIES; tries++) {
       this.#try(stepS);
       const shorterS = this.#tooBold(stepS) ?? this.#interrupted(stepS, free, waiting, endS);
       if (shorterS === null) break;
       stepS = shorterS;
     }
+    stepS = this.chamber.trial.stepS;
     const landed = this.mode !== 'follow' && !waiting && Math.abs(this.#gapAtEnd(stepS, free)) <= LANDED_C;
     this.#giveUpIfStuck(stepS, free || waiting);
     const nextClockS = free ? 0 : clockAfterS(programmer, stepS, this.chamber.trial.endC + this.offsetC);
@@ -218,7 +226,7 @@ export class March {
       stepS *
       (this.#fresh
         ? Math.max(0.1, (0.8 * mostC) / surpriseC)
-        : Math.max(0.2, 0.9 * Math.sqrt(toleranceC / surpriseC)))
+        : Math.max(0.2, 0.9 * Math.cbrt(toleranceC / surpriseC)))
     );
   }
 
@@ -233,6 +241,8 @@ export class March {
     if (beyondC <= LANDED_C || stepS <= 1e-3) return null;
     const behindC = this.mode === 'full' ? -startC : startC;
     if (behindC <= LANDED_C) {
+      // It cannot follow either: full fire and the set point go together here, and full fire it is.
+      if (this.#saturated) return null;
       this.mode = 'follow';
       return stepS;
     }
@@ -243,18 +253,22 @@ export class March {
   #saturates(stepS: number): number | null {
     const { trial, firing, tempC } = this.chamber;
     const fullW = firing.fullHeatW(trial.endC);
-    // Both the end of the step and its mean must be within what the kiln has: right after a corner the need falls fast.
+    const over = trial.endHeatW - fullW;
+    const under = -trial.endHeatW;
+    // Needed on the mean but no longer at the end: saturated from the step's beginning on.
     const meanOver = trial.meanHeatW - firing.fullHeatW((tempC + trial.endC) / 2);
-    const over = Math.max(trial.endHeatW - fullW, meanOver);
-    const under = -Math.min(trial.endHeatW, trial.meanHeatW);
-    if (over <= 1e-9 * fullW && under <= 1e-9 * fullW) return null;
-    const limitW = over > 0 ? fullW : 0;
-    const roomW = this.#fresh ? 0 : Math.abs(limitW - this.#endHeatW);
-    if (stepS <= PROBE_S || (!this.#fresh && roomW <= 1e-4 * fullW)) {
-      this.mode = over > 0 ? 'full' : 'off';
+    const from = Math.max(meanOver, -trial.meanHeatW) > 1e-9 * fullW;
+    const within = over <= 1e-9 * fullW && under <= 1e-9 * fullW;
+    if (within && !from) return null;
+    if (this.#fresh && stepS > PROBE_S) return PROBE_S;
+    const roomW = Math.abs((over > 0 ? fullW : 0) - this.#endHeatW);
+    if (within || this.#fresh || stepS <= PROBE_S || roomW <= 1e-4 * fullW) {
+      this.mode = Math.max(over, meanOver) > 0 ? 'full' : 'off';
+      this.#saturated = true;
       return stepS;
     }
-    if (this.#fresh) return PROBE_S;
+    // A need that jumped since the last step (a pattern's heat, a vent) is not found by cutting the step ever shorter.
+    if (++this.#cuts > MOST_CUTS) return PROBE_S;
     return stepS * Math.min(0.95, Math.max(0.02, roomW / (roomW + Math.max(over, under))));
   }
 
@@ -307,14 +321,14 @@ export class March {
   #accept(stepS: number): void {
     const { chamber, settings } = this;
     const { surpriseC, endHeatW } = chamber.trial;
-    takeStep(chamber);
+    takeStep(chamber, this.#fresh);
     this.atS += stepS;
     this.steps++;
     if (this.steps > this.#mostSteps)
       throw new FiringTooStiff(`not computed: after ${this.steps} steps it is only at ${this.atS} s`);
     this.#fresh = false;
     this.#endHeatW = endHeatW;
-    const growth = 0.9 * Math.sqrt(settings.toleranceC / Math.max(surpriseC, 1e-9));
+    const growth = 0.9 * Math.cbrt(settings.toleranceC / Math.max(surpriseC, 1e-9));
     this.#nextS = Math.min(this.#mostS, stepS * Math.min(2, Math.max(0.3, growth)));
   }
 }

@@ -2,7 +2,7 @@ import type { Body } from './body';
 import { WATER_EVAPORATION_J_PER_KG } from './constants';
 import { GrowingSeries } from './growing-series';
 import { heatWorkOfStepH } from './heat-work';
-import { patternLeftShare, type PatternState } from './pattern-burnout';
+import type { PatternState } from './pattern-burnout';
 import type { MouldModel } from './resolve';
 import type { MouldTrace } from './simulation';
 
@@ -50,7 +50,7 @@ export class MouldRecorder {
     this.#surfaceC.push(body.tempC[0] ?? 0);
     this.#coreC.push(this.#lastCoreC);
     this.#waterKg.push(waterKgOf(body));
-    this.#patternLeftShare.push(this.#pattern === null ? 0 : patternLeftShare(this.#pattern));
+    this.#patternLeftShare.push(this.#pattern === null ? 0 : this.#pattern.leftShare);
     this.#gasGPerMin.push(gasGPerMin);
     this.#gradientKPerM.push(steepestKPerM(body));
     this.#maxRateCPerH.push(maxRateCPerH);

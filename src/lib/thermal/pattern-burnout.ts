@@ -34,6 +34,10 @@ export interface PatternState {
   /** The same at the end of the step last looked at. */
   nextUndrainedShare: number;
   readonly nextStepLeft: Float64Array;
+  /** Whether that step changes anything. */
+  moves: boolean;
+  /** Share of the pattern's mass left, 0-1. */
+  leftShare: number;
 }
 
 /** A whole pattern. */
@@ -45,18 +49,17 @@ export function patternState(properties: PatternProperties): PatternState {
     stepLeft: new Float64Array(steps).fill(1),
     nextUndrainedShare: 1,
     nextStepLeft: new Float64Array(steps).fill(1),
+    moves: false,
+    leftShare: 1,
   };
 }
 
-/** Share of the organic mass that is still there, 0-1. */
-function organicLeft(state: PatternState): number {
-  return state.properties.steps.reduce((sum, step, i) => sum + step.massShare * (state.stepLeft[i] ?? 0), 0);
-}
-
 /** Share of the pattern's mass left in the mould: undrained × (organic left × (1 − ash) + ash), 0-1. */
-export function patternLeftShare(state: PatternState): number {
-  const { ashShare } = state.properties;
-  return state.undrainedShare * (organicLeft(state) * (1 - ashShare) + ashShare);
+function leftShareOf({ properties, stepLeft, undrainedShare }: PatternState): number {
+  const { steps, ashShare } = properties;
+  let organic = 0;
+  for (let i = 0; i < steps.length; i++) organic += steps[i]!.massShare * stepLeft[i]!;
+  return undrainedShare * (organic * (1 - ashShare) + ashShare);
 }
 
 const COLDEST_DECAY_C = 120;
@@ -100,9 +103,12 @@ export function foreseePattern(
   const { properties, stepLeft, nextStepLeft } = state;
   const { flowsC, drainedShare, drainTimeS, massKg, ashShare, steps } = properties;
   const hottestC = Math.max(fromC, toC);
+  const flows = draining && flowsC !== null && hottestC >= flowsC;
+  state.moves = flows || hottestC >= COLDEST_DECAY_C;
+  if (!state.moves) return 0;
   state.nextUndrainedShare = state.undrainedShare;
-  nextStepLeft.set(stepLeft);
-  if (draining && flowsC !== null && hottestC >= flowsC) {
+  for (let i = 0; i < steps.length; i++) nextStepLeft[i] = stepLeft[i]!;
+  if (flows) {
     const drained = drainTimeS > 0 ? (drainedShare * stepS) / drainTimeS : drainedShare;
     state.nextUndrainedShare = Math.max(
       Math.min(state.undrainedShare, 1 - drainedShare),
@@ -127,6 +133,8 @@ export function foreseePattern(
 
 /** Takes the step that was last looked at. */
 export function settlePattern(state: PatternState): void {
+  if (!state.moves) return;
   state.undrainedShare = state.nextUndrainedShare;
-  state.stepLeft.set(state.nextStepLeft);
+  for (let i = 0; i < state.stepLeft.length; i++) state.stepLeft[i] = state.nextStepLeft[i]!;
+  state.leftShare = leftShareOf(state);
 }

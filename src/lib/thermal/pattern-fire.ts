@@ -5,6 +5,9 @@ import type { FiringModel, MouldModel } from './resolve';
 /** Time over which heat that was foreseen wrongly is made up, s. */
 const CATCH_UP_S = 300;
 
+/** Time in which the gas of the chamber is renewed: the burner's air outlasts the flame by it (one chamber volume a minute), s. */
+const RENEWAL_S = 60;
+
 interface BurningMould {
   readonly count: number;
   readonly body: Body;
@@ -69,7 +72,8 @@ export class PatternFire {
     this.#owedJ += heatJ - chamber.sourceW * stepS;
     for (const mould of this.#moulds) if (mould !== null) settlePattern(mould.state);
     const { inputJ } = chamber.booked;
-    this.#burnerAirKgPerS = ((inputJ - this.#lastInputJ) / stepS) * kiln.excessAirKgPerJ;
+    const nowKgPerS = ((inputJ - this.#lastInputJ) / stepS) * kiln.excessAirKgPerJ;
+    this.#burnerAirKgPerS += (nowKgPerS - this.#burnerAirKgPerS) * (1 - Math.exp(-stepS / RENEWAL_S));
     this.#lastInputJ = inputJ;
   }
 

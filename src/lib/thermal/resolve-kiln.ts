@@ -58,6 +58,9 @@ function liningMaterial(id: string): LiningMaterial {
   return material;
 }
 
+/** Cells of a lining: 1.5 mm at the hot face, growing by a seventh of their depth. */
+export const LINING_GRID = { kind: 'graded', firstM: 0.0015, growth: 0.14 } as const;
+
 /**
  * The lining as one body. Its area grows with depth as A(x) = A + 1.08·E·x + 3.6·x², E the sum of the chamber's twelve
  * edges, so that a steady wall of thickness L conducts over A + 0.54·E·L + 8·0.15·L²: the shape factors of Langmuir, Adams and
@@ -80,7 +83,7 @@ function liningOf(kiln: KilnPlate, ambientC: number): BodyProperties {
   return {
     layers,
     area: [2 * (w * d + d * h + w * h), 1.08 * 4 * (w + d + h), 3.6],
-    grid: { kind: 'graded', firstM: 0.0015, growth: 0.14 },
+    grid: LINING_GRID,
     face: { kind: 'held' },
     far: { kind: 'room', ambientC, film: { emissivity, heightM: h + 2 * thicknessM } },
     startC: ambientC,

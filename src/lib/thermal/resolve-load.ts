@@ -63,7 +63,7 @@ function shapeOf(mould: Mould, densityKgPerM3: number, typicalWallM: number | nu
   return {
     depthM: radiusM,
     area: [2 * radiusM * perimeterM, -2 * perimeterM, 0],
-    cells: Math.min(20, Math.max(8, Math.ceil(radiusM / 0.005))),
+    cells: Math.min(20, Math.max(8, Math.ceil(radiusM / 0.006))),
   };
 }
 
