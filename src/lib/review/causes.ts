@@ -1,5 +1,5 @@
 import type { Bench, Candidate } from './bench';
-import { holdLengths } from './hold-findings';
+import { holdLengths, holdToleranceS, plannedArrivalS } from './hold-findings';
 import { coveredS, sharedS, type Span } from './spans';
 import type { ComputedFinding, FindingKind } from './types';
 
@@ -57,7 +57,7 @@ export function sortedByCause(bench: Bench, candidates: readonly Candidate[]): S
   const control = kept.filter((one) => one.channelId === bench.input.controlChannelId && one.kind !== 'late');
   kept.push(
     ...holdLengths(bench, late, takenByFindings(bench, control)).filter(
-      (hold) => !isLates(bench, hold, late),
+      (hold) => !isLates(bench, hold, late) && !isPushs(bench, hold, control),
     ),
   );
   kept.sort((a, b) => a.startS - b.startS || rank(a.kind) - rank(b.kind));
@@ -93,6 +93,15 @@ function isLates(bench: Bench, hold: Candidate, late: readonly Candidate[]): boo
     bench.input.waitBandC === null &&
     late.some((l) => l.segment === hold.segment)
   );
+}
+
+/** A hold that was long only because a push along its ramp brought the kiln there early. */
+function isPushs(bench: Bench, hold: Candidate, control: readonly Candidate[]): boolean {
+  const one = bench.fired[hold.segment];
+  if (hold.kind !== 'hold-long' || !one || one.arrivedS === null) return false;
+  if (!control.some(({ kind, segment }) => kind === 'too-steep' && segment === hold.segment)) return false;
+  const earlyS = (plannedArrivalS(one) ?? one.arrivedS) - one.arrivedS;
+  return (hold.byS ?? 0) - earlyS <= holdToleranceS(bench, one.leg.holdS);
 }
 
 /** Whether `cause`, kept already, accounts for `one`. */

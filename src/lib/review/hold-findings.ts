@@ -42,9 +42,8 @@ export function holdToleranceS(bench: Pick<Bench, 'limits'>, plannedS: number): 
 }
 
 /**
- * `hold-short` and `hold-long`: the time from arrival to when the programmer moved on, against the planned hold. Short only
- * if it is so counted from the band (the longer reading), long only if counted from within 3 °C (the shorter one) and
- * without the time that other findings took: time out of the band is theirs.
+ * `hold-short` and `hold-long`: the time from arrival within 3 °C to when the programmer moved on, against the planned
+ * hold. Time that other findings took is theirs: it makes no hold long, and an arrival that fell into it none short.
  * @param taken spans, with their reach, of findings on the control channel
  */
 export function holdLengths(bench: Bench, late: readonly Candidate[], taken: readonly Span[]): Candidate[] {
@@ -54,9 +53,10 @@ export function holdLengths(bench: Bench, late: readonly Candidate[], taken: rea
     const endS = endIn(bench, one);
     const tolS = holdToleranceS(bench, leg.holdS);
     const ended = one.endS !== null;
-    const heldS = endS - one.arrivedS;
+    const nearS = one.nearS ?? one.arrivedS;
+    const heldS = endS - nearS + coveredS({ startS: one.arrivedS, endS: nearS }, taken);
     const lateHere = late.some((l) => l.segment === leg.index);
-    const countedBefore = lateHere ? Math.max(0, one.arrivedS - Math.max(one.rampEndS, one.startS)) : 0;
+    const countedBefore = lateHere ? Math.max(0, nearS - Math.max(one.rampEndS, one.startS)) : 0;
     const hold = (kind: 'hold-short' | 'hold-long', byS: number) =>
       candidate({
         kind,
@@ -68,7 +68,6 @@ export function holdLengths(bench: Bench, late: readonly Candidate[], taken: rea
         holdLostS: kind === 'hold-short' ? -byS : null,
       });
     if (ended && heldS + countedBefore < leg.holdS - tolS) return [hold('hold-short', heldS - leg.holdS)];
-    const nearS = one.nearS ?? one.arrivedS;
     const ownS = endS - nearS - coveredS({ startS: nearS, endS }, taken);
     return ownS > leg.holdS + tolS ? [hold('hold-long', ownS - leg.holdS)] : [];
   });
@@ -88,7 +87,8 @@ export function endedEarly(
   const reached = bench.fired.find((one) => one.leg.index === lastHold.index);
   if (reached?.endS != null) return [];
   if (reached && reached.leg.index < legCount - 1 && bench.fired.length > reached.leg.index + 1) return [];
-  const heldS = reached?.arrivedS != null ? bench.logEndS - reached.arrivedS : 0;
+  const countedFromS = reached?.nearS ?? reached?.arrivedS;
+  const heldS = countedFromS == null ? 0 : bench.logEndS - countedFromS;
   const missingS = lastHold.holdS - heldS;
   const tolS = Math.max(bench.limits.endedToleranceS, bench.limits.endedToleranceShare * lastHold.holdS);
   if (missingS <= tolS) return [];
