@@ -50,7 +50,7 @@ function Heat({ form }: { readonly form: FormTools<FurnaceTyped> }) {
       <QuantityField
         form={form}
         name="efficiencyShare"
-        label="Heat that reaches the metal, if known"
+        label="Heat into the metal, if known"
         kind="percent"
       />
       <QuantityField form={form} name="capacityKg" label="Largest charge" kind="mass" />

@@ -94,3 +94,19 @@ export const archivingOf = (form: Form): { revision: number; change: { archived:
   revision: Number(form.text('revision')),
   change: { archived: form.text('action') === 'archive' },
 });
+
+/**
+ * Does what the form of a page for putting away or bringing back asks, by the thing's service; null where the page is only
+ * looked at. The value says which of the two it was.
+ */
+export async function archivingPosted(
+  request: Request,
+  update: (revision: number, change: { archived: boolean }) => Promise<unknown>,
+): Promise<Attempt<'archived' | 'brought-back'> | null> {
+  if (request.method !== 'POST') return null;
+  const { revision, change } = archivingOf(await readForm(request));
+  return attempt(async () => {
+    await update(revision, change);
+    return change.archived ? 'archived' : 'brought-back';
+  });
+}

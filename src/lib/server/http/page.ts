@@ -33,11 +33,13 @@ export function visitor(locals: App.Locals): Visitor {
   };
 }
 
-/** Query of a list in a page's address; what the list does not know, or cannot read, is left aside. */
-export function queryOf<S extends z.ZodObject>(schema: S, url: URL): z.output<S> {
-  const known = [...url.searchParams].filter(([name, value]) => name in schema.shape && value !== '');
-  const result = schema.safeParse(Object.fromEntries(known));
-  return result.success ? result.data : schema.parse({});
+/** Query of a list in a page's address; each part that the list does not know, or cannot read, is left aside. */
+export function queryOf<S extends z.ZodObject<z.ZodRawShape>>(schema: S, url: URL): z.output<S> {
+  const shape = schema.shape as Record<string, z.ZodType>;
+  const readable = [...url.searchParams].filter(
+    ([name, value]) => value !== '' && Object.hasOwn(shape, name) && shape[name]?.safeParse(value).success,
+  );
+  return schema.parse(Object.fromEntries(readable));
 }
 
 /** A path of this site from `?next=`; whatever could lead elsewhere leads to the first page. */
