@@ -6,6 +6,8 @@ import { listHandouts } from '../services/handouts';
 import { listProfiles } from '../services/profiles';
 import { listRuns } from '../services/runs';
 
+/** Most of a kind that one look reads; where there are more, the lists have the rest. */
+const READ_AT_MOST = 50;
 const WEEK_MS = 7 * 86_400_000;
 /** No studio kiln stays too hot to open for longer. */
 const COOLED_AFTER_MS = 2 * 86_400_000;
@@ -27,15 +29,17 @@ export interface Today {
   readonly toRead: readonly Handout[];
   /** Handed to this person, read and in force. */
   readonly toFire: readonly Handout[];
+  /** Of which there are more than {@link READ_AT_MOST}, of which only the newest were read. */
+  readonly cut: Readonly<Record<'underWay' | 'cooling' | 'planned', boolean>>;
 }
 
 export async function todayOf(actor: Actor, now: Date): Promise<Today> {
   const reviews = hasRole(actor, 'teacher', 'owner');
   const decides = hasRole(actor, 'technician', 'teacher');
   const [underWay, cooling, planned, recent, inReview, drafts, handouts] = await Promise.all([
-    listRuns(actor, { limit: 50, state: 'under-way' }),
-    listRuns(actor, { limit: 50, state: 'cooling-down' }),
-    listRuns(actor, { limit: 50, state: 'planned' }),
+    listRuns(actor, { limit: READ_AT_MOST, state: 'under-way' }),
+    listRuns(actor, { limit: READ_AT_MOST, state: 'cooling-down' }),
+    listRuns(actor, { limit: READ_AT_MOST, state: 'planned' }),
     decides ? listRuns(actor, { limit: 100 }) : null,
     reviews ? listProfiles(actor, { limit: 50, archived: 'no', state: 'in-review' }) : null,
     listProfiles(actor, { limit: 50, archived: 'no', state: 'draft' }),
@@ -48,9 +52,10 @@ export async function todayOf(actor: Actor, now: Date): Promise<Today> {
   const isOpen = ({ state }: Handout) => state === 'in-force' || state === 'ahead';
   const isStillHot = (run: Run): boolean =>
     now.getTime() - Date.parse(run.finishedAt ?? run.startedAt ?? run.plannedStartAt) < COOLED_AFTER_MS;
+  const stillHot = cooling.items.filter(isStillHot);
   return {
     underWay: underWay.items,
-    cooling: cooling.items.filter(isStillHot),
+    cooling: stillHot,
     toSign: decides ? cooling.items.filter((run) => !isStillHot(run)) : [],
     planned: planned.items
       .filter((run) => Date.parse(run.plannedStartAt) < now.getTime() + WEEK_MS)
@@ -60,5 +65,10 @@ export async function todayOf(actor: Actor, now: Date): Promise<Today> {
     ownDrafts: drafts.items.filter((profile) => profile.latest.authorId === actor.userId),
     toRead: mine.filter(({ handout, read }) => !read && isOpen(handout)).map(({ handout }) => handout),
     toFire: mine.filter(({ handout, read }) => read && isOpen(handout)).map(({ handout }) => handout),
+    cut: {
+      underWay: underWay.nextCursor !== null,
+      cooling: cooling.nextCursor !== null && stillHot.length === cooling.items.length,
+      planned: planned.nextCursor !== null,
+    },
   };
 }
