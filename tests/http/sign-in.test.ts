@@ -6,10 +6,13 @@ const app = await testApp();
 const { password } = demoAccounts;
 const tech = 'tech@quarrylane.example';
 
-const cookieOf = (headers: Record<string, unknown>): string =>
-  ([] as string[])
-    .concat(headers['set-cookie'] as string[])
-    .find((each) => each.startsWith('holdfast_session=')) ?? '';
+const cookieOf = (headers: Record<string, unknown>, name = 'holdfast_session'): string =>
+  ([] as string[]).concat(headers['set-cookie'] as string[]).find((each) => each.startsWith(`${name}=`)) ??
+  '';
+const valueOf = (headers: Record<string, unknown>, name: string): string =>
+  cookieOf(headers, name)
+    .split(';')[0]
+    ?.slice(name.length + 1) ?? '';
 
 describe('signing in', () => {
   it('gives the person, their studio and their roles, and an HttpOnly session cookie', async () => {
@@ -65,12 +68,14 @@ describe('signing in', () => {
 
   it('does not take the cookie that remembers a browser for a session', async () => {
     const answer = await app.visitor().post('/api/auth/sign-in', { email: tech, password }).expect(200);
-    const device = ([] as string[])
-      .concat(answer.headers['set-cookie'] as unknown as string[])
-      .find((each) => each.startsWith('holdfast_device='))
-      ?.split(';')[0]
-      ?.split('=')[1];
-    expect(device).toBeTruthy();
+    const device = valueOf(answer.headers, 'holdfast_device');
+    const [, claims = ''] = device.split('.');
+    expect(JSON.parse(Buffer.from(claims, 'base64url').toString())).toMatchObject({
+      aud: 'device',
+      sub: app.db.people.tech.id,
+    });
+    const session = valueOf(answer.headers, 'holdfast_session');
+    await app.visitor().get('/api/auth/me').set('Cookie', `holdfast_session=${session}`).expect(200);
     await app.visitor().get('/api/auth/me').set('Cookie', `holdfast_session=${device}`).expect(401);
   });
 });

@@ -1,5 +1,12 @@
 import { describe, expect, it } from 'vitest';
-import { findMaterial, inversionsOf, materials, materialsSchema, type Property } from '~/lib/materials';
+import {
+  findMaterial,
+  inversionsOf,
+  materials,
+  materialsSchema,
+  type Property,
+  valueAt,
+} from '~/lib/materials';
 
 const NAMED_IN_THE_CONTRACT = {
   moulds: [
@@ -115,7 +122,13 @@ describe('the materials table', () => {
   it('gives every mould that holds gypsum its two steps and a ceiling for carbon', () => {
     for (const mould of materials.moulds.filter((item) => item.contains.includes('gypsum'))) {
       expect(mould.reactions).toHaveLength(2);
-      expect(mould.properties.maxWithCarbonC).toBeDefined();
+      const { maxC, maxWithCarbonC } = mould.properties;
+      if (!maxC || !maxWithCarbonC) throw new Error(`${mould.id} has no ceiling`);
+      expect(maxWithCarbonC.unit).toBe('°C');
+      // From memory: carbon reduces calcium sulphate from 700-750 °C; without carbon the mould stands more.
+      expect(valueAt(maxWithCarbonC, 20)).toBeLessThanOrEqual(750);
+      expect(valueAt(maxWithCarbonC, 20)).toBeGreaterThanOrEqual(700);
+      expect(valueAt(maxWithCarbonC, 20)).toBeLessThan(valueAt(maxC, 20));
     }
   });
 });
