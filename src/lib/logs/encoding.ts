@@ -1,3 +1,4 @@
+import { concat } from './bytes';
 import type { LogEncoding } from './schema';
 
 export interface EncodingFound {
@@ -53,6 +54,8 @@ function isUtf8(head: Uint8Array): boolean {
 export class TextStream {
   private decoder: TextDecoder;
   private switchable: boolean;
+  /** Bytes of a UTF-8 character that the last piece broke off in. */
+  private begun = NONE;
 
   constructor(private found: EncodingFound) {
     const label = found.encoding === 'utf-8-bom' ? 'utf-8' : found.encoding;
@@ -65,18 +68,44 @@ export class TextStream {
   }
 
   push(bytes: Uint8Array): string {
-    const text = this.decoder.decode(bytes, { stream: true });
+    if (this.decoder.encoding !== 'utf-8') return this.streamed(bytes);
+    const all = this.begun.length > 0 ? concat([this.begun, bytes]) : bytes;
+    const text = this.utf8(all);
     if (!this.switchable || !NOT_ASCII.test(text)) return text;
     this.switchable = false;
-    if (!text.includes('\uFFFD') || isUtf8(bytes)) return text;
+    if (!text.includes('\uFFFD') || isUtf8(all)) return text;
     this.found = { ...this.found, encoding: 'windows-1252' };
     this.decoder = new TextDecoder('windows-1252');
-    return this.decoder.decode(bytes, { stream: true });
+    this.begun = NONE;
+    return this.streamed(all);
   }
 
   end(): string {
-    return this.decoder.decode();
+    return this.begun.length > 0 ? this.decoder.decode(this.begun) : this.decoder.decode();
   }
+
+  private streamed(bytes: Uint8Array): string {
+    return this.decoder.decode(bytes, { stream: true });
+  }
+
+  /** Whole characters at a time: engines decode these several times faster than a stream, into text of half the size. */
+  private utf8(all: Uint8Array): string {
+    const whole = all.length - begunBytes(all);
+    this.begun = whole < all.length ? all.slice(whole) : NONE;
+    return this.decoder.decode(all.subarray(0, whole));
+  }
+}
+
+const NONE = new Uint8Array(0);
+
+/** How many bytes at the end begin a UTF-8 character that goes on: 0 to 3. */
+function begunBytes(bytes: Uint8Array): number {
+  for (let back = 1; back <= Math.min(3, bytes.length); back++) {
+    const byte = bytes[bytes.length - back] as number;
+    if (byte < 0x80) return 0;
+    if (byte >= 0xc0) return back < (byte >= 0xf0 ? 4 : byte >= 0xe0 ? 3 : 2) ? back : 0;
+  }
+  return 0;
 }
 
 const NOT_ASCII = /\P{ASCII}/u;

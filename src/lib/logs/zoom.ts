@@ -19,14 +19,10 @@ const MEAN_STEP = 1000;
 export class ZoomBuilder {
   #times: number[] = [];
   #columns: { min: number[]; max: number[]; mean: number[] }[] = [];
-  #open: {
-    timeMs: number;
-    samples: number;
-    min: number[];
-    max: number[];
-    sum: number[];
-    count: number[];
-  } | null = null;
+  /** Samples of the row that is being made, and what it is so far by channel: least, greatest, sum, values that count. */
+  #samples = 0;
+  #timeMs = 0;
+  #open = new Float64Array(0);
 
   constructor(private readonly group: number) {}
 
@@ -48,38 +44,64 @@ export class ZoomBuilder {
   /** Takes rows of a finer level; each counts as one. */
   addRows(rows: ZoomRows): void {
     const channels = rows.min.length;
-    for (let row = 0; row < rows.timeMs.length; row++) {
-      const open = (this.#open ??= emptyRow(rows.timeMs[row] as number, channels));
-      for (let channel = 0; channel < channels; channel++) {
-        const [min, max, mean] = [
-          rows.min[channel]?.[row] as number,
-          rows.max[channel]?.[row] as number,
-          rows.mean[channel]?.[row] as number,
-        ];
-        if (Number.isNaN(mean)) continue;
-        if (min < (open.min[channel] as number)) open.min[channel] = min;
-        if (max > (open.max[channel] as number)) open.max[channel] = max;
-        open.sum[channel] = (open.sum[channel] as number) + mean;
-        open.count[channel] = (open.count[channel] as number) + 1;
-      }
-      open.samples += 1;
-      if (open.samples >= this.group) this.#close();
+    let row = 0;
+    while (row < rows.timeMs.length) {
+      if (this.#samples === 0) this.#begin(rows.timeMs[row] as number, channels);
+      const to = Math.min(rows.timeMs.length, row + this.group - this.#samples);
+      for (let channel = 0; channel < channels; channel++) this.#gather(rows, channel, row, to);
+      this.#samples += to - row;
+      row = to;
+      if (this.#samples >= this.group) this.#close();
     }
   }
 
+  #begin(timeMs: number, channels: number): void {
+    this.#timeMs = timeMs;
+    if (this.#open.length !== channels * PARTS) this.#open = new Float64Array(channels * PARTS);
+    for (let at = 0; at < this.#open.length; at += PARTS) {
+      this.#open[at] = Infinity;
+      this.#open[at + 1] = -Infinity;
+      this.#open[at + 2] = 0;
+      this.#open[at + 3] = 0;
+    }
+  }
+
+  #gather(rows: ZoomRows, channel: number, from: number, to: number): void {
+    const mins = rows.min[channel] as Float64Array;
+    const maxs = rows.max[channel] as Float64Array;
+    const means = rows.mean[channel] as Float64Array;
+    const at = channel * PARTS;
+    let min = this.#open[at] as number;
+    let max = this.#open[at + 1] as number;
+    let sum = this.#open[at + 2] as number;
+    let count = this.#open[at + 3] as number;
+    for (let row = from; row < to; row++) {
+      const mean = means[row] as number;
+      if (mean !== mean) continue;
+      if ((mins[row] as number) < min) min = mins[row] as number;
+      if ((maxs[row] as number) > max) max = maxs[row] as number;
+      sum += mean;
+      count++;
+    }
+    this.#open[at] = min;
+    this.#open[at + 1] = max;
+    this.#open[at + 2] = sum;
+    this.#open[at + 3] = count;
+  }
+
   #close(): void {
-    const open = this.#open;
-    this.#open = null;
-    if (!open) return;
-    this.#times.push(open.timeMs);
-    open.count.forEach((count, channel) => {
-      const column = (this.#columns[channel] ??= { min: [], max: [], mean: [] });
-      column.min.push(count > 0 ? (open.min[channel] as number) : Number.NaN);
-      column.max.push(count > 0 ? (open.max[channel] as number) : Number.NaN);
+    if (this.#samples === 0) return;
+    this.#samples = 0;
+    this.#times.push(this.#timeMs);
+    for (let at = 0; at < this.#open.length; at += PARTS) {
+      const column = (this.#columns[at / PARTS] ??= { min: [], max: [], mean: [] });
+      const count = this.#open[at + 3] as number;
+      column.min.push(count > 0 ? (this.#open[at] as number) : Number.NaN);
+      column.max.push(count > 0 ? (this.#open[at + 1] as number) : Number.NaN);
       column.mean.push(
-        count > 0 ? Math.round(((open.sum[channel] as number) / count) * MEAN_STEP) / MEAN_STEP : Number.NaN,
+        count > 0 ? Math.round(((this.#open[at + 2] as number) / count) * MEAN_STEP) / MEAN_STEP : Number.NaN,
       );
-    });
+    }
   }
 
   /** The complete rows so far, which are then forgotten. */
@@ -102,17 +124,8 @@ export class ZoomBuilder {
   }
 }
 
-function emptyRow(timeMs: number, channels: number) {
-  const filled = (value: number) => Array.from({ length: channels }, () => value);
-  return {
-    timeMs,
-    samples: 0,
-    min: filled(Infinity),
-    max: filled(-Infinity),
-    sum: filled(0),
-    count: filled(0),
-  };
-}
+/** Figures kept of each channel of the row that is being made. */
+const PARTS = 4;
 
 /** A level's columns in the order they are stored: least, greatest and mean of the first channel, then of the next. */
 export const zoomColumns = (rows: ZoomRows): Float64Array[] =>

@@ -1,4 +1,4 @@
-import { clockOf, type LogClock } from './clock';
+import { clockOf, correctedTimeS, type LogClock } from './clock';
 import { gridOf, type Grid } from './grid';
 import { noiseOf } from './noise';
 import { examined, type Sensor } from './sensors';
@@ -36,17 +36,23 @@ export function measured(input: ReviewInput, limits: Thresholds): Measured {
     firstMs,
     control: sensor(channel),
     others: others.map(sensor),
-    power: power ? onGrid(sensor(power), clock) : null,
+    power: power ? gridOn(correctedTimeS(power.timeMs, firstMs, clock.leaps), power, null, clock) : null,
   };
 }
 
 /** A sensor's sound readings on a grid whose origin is the control channel's first sample. */
-export function onGrid(sensor: Sensor, clock: LogClock): Grid {
-  const powerOrTemperature = sensor.channel.quantity === 'temperature' ? sensor.dropped : null;
-  const firstS = sensor.timeS.length ? sensor.timeS[0]! : 0;
-  const fromFirst = firstS === 0 ? sensor.timeS : sensor.timeS.map((t) => t - firstS);
-  const grid = gridOf(fromFirst, sensor.channel.value, powerOrTemperature, clock.gapLimitS);
-  return { ...grid, originS: firstS };
+export const onGrid = ({ timeS, channel, dropped }: Sensor, clock: LogClock): Grid =>
+  gridOn(timeS, channel, dropped, clock);
+
+function gridOn(
+  timeS: Float64Array,
+  { value }: ReviewChannel,
+  dropped: Uint8Array | null,
+  clock: LogClock,
+): Grid {
+  const firstS = timeS.length ? timeS[0]! : 0;
+  const fromFirst = firstS === 0 ? timeS : timeS.map((t) => t - firstS);
+  return { ...gridOf(fromFirst, value, dropped, clock.gapLimitS), originS: firstS };
 }
 
 /** The same grid on another clock: times less `offsetS`. */

@@ -1,10 +1,11 @@
-import { QueryTypes } from 'sequelize';
+import { QueryTypes, type CreationAttributes } from 'sequelize';
 import { deflateRawSync, inflateRawSync } from 'node:zlib';
 import { decodeBlock, encodeBlock } from '~/lib/logs/codec';
 import { ZoomBuilder, zoomColumns, type ZoomRows } from '~/lib/logs/zoom';
 import type { LogBlock } from '~/lib/logs/types';
 import { database, type Tx } from '../database';
 import { SampleChunkRow } from '../models/log';
+import { WriteBehind } from './write-behind';
 
 /** Rows of one level that one row of the next stands for. */
 export const ZOOM_FACTOR = 16;
@@ -12,6 +13,8 @@ const ZOOM_LEVELS = 5;
 /** A level with fewer rows than this answers nothing that the level below does not answer as fast. */
 const FEWEST_ZOOM_ROWS = 256;
 const CHUNK_ROWS = 4096;
+/** Chunks written by one statement. */
+const CHUNKS_AT_ONCE = 24;
 
 interface LogKey {
   readonly studioId: string;
@@ -21,6 +24,8 @@ interface LogKey {
 /** Stores the blocks of a log as they are read: each as measured, and in coarser levels that keep least, greatest and mean. */
 export class SampleWriter {
   readonly #next = Array.from({ length: ZOOM_LEVELS + 1 }, () => 0);
+  readonly #behind = new WriteBehind();
+  #rows: CreationAttributes<SampleChunkRow>[] = [];
   readonly #zoom = Array.from({ length: ZOOM_LEVELS }, () => new ZoomBuilder(ZOOM_FACTOR));
 
   constructor(
@@ -41,6 +46,13 @@ export class SampleWriter {
   /** Writes what is left of each level that is worth having. */
   async finish(): Promise<void> {
     await this.#passOn((builder) => builder.takeAll());
+    await this.#flush();
+    await this.#behind.done();
+  }
+
+  /** Waits for what is being written, whatever comes of it. */
+  settled(): Promise<void> {
+    return this.#behind.settled();
   }
 
   /** Takes rows from each level in turn, gives them to the next, and stores them. */
@@ -64,9 +76,16 @@ export class SampleWriter {
     const chunk = this.#next[level] ?? 0;
     this.#next[level] = chunk + 1;
     const data = deflateRawSync(encodeBlock(timeMs, columns));
-    await SampleChunkRow.create(
-      { ...this.key, level, chunk, fromMs, toMs, rows: timeMs.length, data },
-      { transaction: this.tx, returning: false },
+    this.#rows.push({ ...this.key, level, chunk, fromMs, toMs, rows: timeMs.length, data });
+    if (this.#rows.length >= CHUNKS_AT_ONCE) await this.#flush();
+  }
+
+  async #flush(): Promise<void> {
+    const rows = this.#rows;
+    this.#rows = [];
+    if (rows.length === 0) return;
+    await this.#behind.write(() =>
+      SampleChunkRow.bulkCreate(rows, { transaction: this.tx, returning: false }),
     );
   }
 }

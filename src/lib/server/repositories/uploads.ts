@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import type { Tx } from '../database';
 import { UploadPartRow, UploadRow } from '../models/log';
+import { WriteBehind } from './write-behind';
 
 /** Bytes of one stored part: large enough to be few, small enough to hold. */
 const PART_BYTES = 1024 * 1024;
@@ -19,6 +20,7 @@ export interface Upload {
  */
 export class UploadWriter {
   readonly #hash = createHash('sha256');
+  readonly #behind = new WriteBehind();
   #pending: Uint8Array[] = [];
   #pendingBytes = 0;
   #part = 0;
@@ -40,17 +42,21 @@ export class UploadWriter {
   /** Hex SHA-256 of the whole. */
   async finish(): Promise<string> {
     if (this.#pendingBytes > 0) await this.#write();
+    await this.#behind.done();
     return this.#hash.digest('hex');
+  }
+
+  /** Waits for what is being written, whatever comes of it. */
+  settled(): Promise<void> {
+    return this.#behind.settled();
   }
 
   async #write(): Promise<void> {
     const data = Buffer.concat(this.#pending, this.#pendingBytes);
     this.#pending = [];
     this.#pendingBytes = 0;
-    await UploadPartRow.create(
-      { ...this.key, part: this.#part++, data },
-      { transaction: this.tx, returning: false },
-    );
+    const row = { ...this.key, part: this.#part++, data };
+    await this.#behind.write(() => UploadPartRow.create(row, { transaction: this.tx, returning: false }));
   }
 }
 

@@ -101,7 +101,7 @@ async function takeUpload(actor: Actor, run: RunRecord, receive: Receive, tx: Tx
       await session.push(part);
       if (session.refusal) throw refused(session.refusal);
     }
-  });
+  }).finally(() => Promise.all([writer.settled(), session.settled()]));
   const mapping = mappingOf(fields.get('mapping'));
   const sha256 = await writer.finish();
   if (await findUpload(studioId, { runId: run.run.id, sha256 }, tx)) throw new KeptBefore(sha256, mapping);
@@ -136,11 +136,15 @@ async function readKept(actor: Actor, run: RunRecord, upload: Upload, mapping: M
 
 async function readParts(actor: Actor, run: RunRecord, upload: Upload, mapping: Mapping, tx: Tx) {
   const session = new LogReadingSession(readingKey(actor, run), mapping, tx);
-  for await (const part of readUpload(actor.studioId, upload.id, tx)) {
-    await session.push(part);
-    if (session.refusal) throw refused(session.refusal);
+  try {
+    for await (const part of readUpload(actor.studioId, upload.id, tx)) {
+      await session.push(part);
+      if (session.refusal) throw refused(session.refusal);
+    }
+    return { session, reading: await session.end() };
+  } finally {
+    await session.settled();
   }
-  return { session, reading: await session.end() };
 }
 
 /** Turns a reading into rows, or into the questions it leaves; `again` reads the kept bytes once more. */

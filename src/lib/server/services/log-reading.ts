@@ -41,6 +41,11 @@ export class LogReadingSession {
     return reading;
   }
 
+  /** Waits for what is being stored, whatever comes of it. */
+  settled(): Promise<void> {
+    return this.#samples.settled();
+  }
+
   series(): LogSeries {
     return this.#buffer.finish();
   }

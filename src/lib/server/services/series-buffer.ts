@@ -2,6 +2,8 @@ import type { LogBlock } from '~/lib/logs/types';
 
 /** Rows held for the review at most. A firing of 14 days logged every five seconds has 241,920. */
 const MAX_ROWS = 400_000;
+/** A row with an open sensor is kept before any other. */
+const OPEN_WEIGHS = 1e6;
 
 /**
  * Gathers the rows of a log for the review without growing with the file: at the limit every second row goes, and of each two
@@ -14,7 +16,8 @@ export class SeriesBuffer {
   #rows = 0;
   /** Rows of the file that one held row stands for. */
   stride = 1;
-  #held: { timeMs: number; values: number[]; open: number[]; distance: number } | null = null;
+  /** The row of the stride under way that differs most from the last one kept; its distance is −1 where there is none. */
+  #held = { timeMs: Number.NaN, values: new Float64Array(0), open: new Uint8Array(0), distance: -1 };
   #inStride = 0;
 
   constructor(private readonly limit = MAX_ROWS) {
@@ -44,35 +47,47 @@ export class SeriesBuffer {
   }
 
   #consider(block: LogBlock, row: number): void {
-    const values = block.values.map((column) => column[row] ?? Number.NaN);
-    const open = block.codes.map((codes) => (codes?.[row] === 2 ? 1 : 0));
-    const distance = this.#distanceFromLast(values) + (open.includes(1) ? 1e6 : 0);
-    if (!this.#held || distance > this.#held.distance) {
-      this.#held = { timeMs: block.timeMs[row] ?? Number.NaN, values, open, distance };
+    const channels = block.values.length;
+    const last = this.#rows - 1;
+    let distance = 0;
+    for (let channel = 0; channel < channels; channel++) {
+      if (block.codes[channel]?.[row] === 2) distance += OPEN_WEIGHS;
+      const kept = last < 0 ? Number.NaN : (this.#columns[channel]?.[last] ?? Number.NaN);
+      const difference = Math.abs((block.values[channel]?.[row] ?? Number.NaN) - kept);
+      if (difference > distance) distance = difference;
     }
+    if (distance > this.#held.distance) this.#hold(block, row, distance);
     this.#inStride += 1;
     if (this.#inStride === this.stride) this.#flush();
   }
 
-  #flush(): void {
-    const held = this.#held;
-    this.#held = null;
-    this.#inStride = 0;
-    if (!held) return;
-    if (this.#rows === this.limit) this.#halve();
-    this.#reserve(held.values.length);
-    this.#timeMs[this.#rows] = held.timeMs;
-    held.values.forEach((value, channel) => ((this.#columns[channel] as Float64Array)[this.#rows] = value));
-    held.open.forEach((value, channel) => ((this.#open[channel] as Uint8Array)[this.#rows] = value));
-    this.#rows += 1;
+  #hold(block: LogBlock, row: number, distance: number): void {
+    const channels = block.values.length;
+    if (this.#held.values.length !== channels) {
+      this.#held.values = new Float64Array(channels);
+      this.#held.open = new Uint8Array(channels);
+    }
+    this.#held.timeMs = block.timeMs[row] ?? Number.NaN;
+    this.#held.distance = distance;
+    for (let channel = 0; channel < channels; channel++) {
+      this.#held.values[channel] = block.values[channel]?.[row] ?? Number.NaN;
+      this.#held.open[channel] = block.codes[channel]?.[row] === 2 ? 1 : 0;
+    }
   }
 
-  #distanceFromLast(values: readonly number[]): number {
-    if (this.#rows === 0) return 0;
-    return values.reduce((most, value, channel) => {
-      const difference = Math.abs(value - (this.#columns[channel]?.[this.#rows - 1] ?? value));
-      return difference > most ? difference : most;
-    }, 0);
+  #flush(): void {
+    const { timeMs, values, open, distance } = this.#held;
+    this.#held.distance = -1;
+    this.#inStride = 0;
+    if (distance < 0) return;
+    if (this.#rows === this.limit) this.#halve();
+    this.#reserve(values.length);
+    this.#timeMs[this.#rows] = timeMs;
+    for (let channel = 0; channel < values.length; channel++) {
+      (this.#columns[channel] as Float64Array)[this.#rows] = values[channel] as number;
+      (this.#open[channel] as Uint8Array)[this.#rows] = open[channel] as number;
+    }
+    this.#rows += 1;
   }
 
   #halve(): void {

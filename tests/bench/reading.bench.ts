@@ -1,32 +1,16 @@
 /**
  * Reading a log against Papa Parse alone, in step mode, on the same text in the same process: 1,000,000 rows of three columns
  * (time, temperature, power), and the memory that reading takes at its highest, also for five times as many rows.
- * Run: npx tsx tests/bench/import-core.bench.ts [rows]
+ * Run: npx tsx tests/bench/reading.bench.ts [rows]
  */
 import Papa from 'papaparse';
+
 import { createLogReader } from '~/lib/logs/reader';
 import { RowSplitter } from '~/lib/logs/splitter';
+import { kilnLog, kilnLogBytes } from './kiln-log';
 
 const PIECE_BYTES = 65_536;
 const rows = Number(process.argv[2] ?? 1_000_000);
-
-/** A kiln's log of a row a second: climbs, holds, with noise, as its logger would write it. */
-function* logText(count: number): Generator<string> {
-  yield 'time,chamber C,power %\n';
-  const startMs = Date.UTC(2026, 1, 14, 7);
-  let noise = 1;
-  let lines = '';
-  for (let i = 0; i < count; i++) {
-    noise = (noise * 16_807) % 2_147_483_647;
-    const tempC = 20 + 850 * Math.min(1, (i % 60_000) / 40_000) + (noise % 100) / 100;
-    lines += `${new Date(startMs + i * 1000).toISOString().slice(0, 19)}Z,${tempC.toFixed(1)},${noise % 101}\n`;
-    if (lines.length > PIECE_BYTES) {
-      yield lines;
-      lines = '';
-    }
-  }
-  yield lines;
-}
 
 const median = (values: number[]): number => [...values].sort((a, b) => a - b)[values.length >> 1] ?? NaN;
 
@@ -50,21 +34,16 @@ function read(pieces: Iterable<Uint8Array>): { rows: number; peakBytes: number }
   return { rows: reading.report.acceptedRows, peakBytes: peak };
 }
 
-function* encoded(count: number): Generator<Uint8Array> {
-  const encoder = new TextEncoder();
-  for (const text of logText(count)) yield encoder.encode(text);
-}
-
 // memory first, from a stream that is made as it is read: nothing of the file is held but by the reader
 const idle = process.memoryUsage().rss;
 for (const count of [rows, 5 * rows]) {
-  const { peakBytes } = read(encoded(count));
+  const { peakBytes } = read(kilnLogBytes({ rows: count, jitterShare: 0 }));
   console.log(
     `${count.toLocaleString('en')} rows: peak memory ${((peakBytes - idle) / 1e6).toFixed(0)} MB over idle`,
   );
 }
 
-const text = [...logText(rows)].join('');
+const text = [...kilnLog({ rows, jitterShare: 0 })].join('');
 const bytes = new TextEncoder().encode(text);
 const pieces: Uint8Array[] = [];
 for (let at = 0; at < bytes.length; at += PIECE_BYTES) pieces.push(bytes.subarray(at, at + PIECE_BYTES));
