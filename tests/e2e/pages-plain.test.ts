@@ -1,7 +1,7 @@
 import type { Page } from 'playwright-core';
 import { beforeAll, describe, expect, test } from 'vitest';
 import { testApp } from '../helpers/app';
-import { overflowPx, PHONE, testBrowser } from '../helpers/browser';
+import { DESK, overflowPx, PHONE, testBrowser } from '../helpers/browser';
 import { firing, KILN } from '../helpers/studio';
 
 const app = await testApp();
@@ -90,28 +90,36 @@ describe(`a studio with ${RUNS} runs, ${UNDER_WAY} of them under way`, () => {
   });
 });
 
-test('names of the greatest length stay within a phone', async () => {
-  const tech = await app.as('tech');
-  const long = (word: string) => word.repeat(200).slice(0, 120);
-  const kiln = await tech.post('/api/kilns', { ...KILN, name: long('Kiln') }).expect(201);
-  const { id: kilnId } = kiln.body as { id: string };
-  const profile = { name: long('Profile'), kilnId, profile: firing() };
-  const made = await tech.post('/api/profiles', profile).expect(201);
-  const { id, version } = made.body as { id: string; version: { id: string } };
-  const plan = { kilnId, profileVersionId: version.id, plannedStartAt: new Date().toISOString() };
-  const run = await tech.post('/api/runs', plan).expect(201);
-  const { page } = await browser.openAs('tech', { viewport: PHONE });
-  const wide: string[] = [];
-  for (const path of [
-    ...['/', '/kilns', `/kilns/${kilnId}`, '/profiles', `/profiles/${id}`, `/profiles/${id}/versions/1`],
-    ...[`/profiles/${id}/versions/1/print`, '/runs', `/runs/${(run.body as { id: string }).id}`, '/runs/new'],
-  ]) {
-    await page.goto(path);
-    const sideways = await overflowPx(page);
-    if (sideways > 0) wide.push(`${path}: ${sideways} px`);
-  }
-  expect(wide).toEqual([]);
-});
+test.each([PHONE, { width: 800, height: 900 }, DESK])(
+  'the longest names stay within $width px',
+  async (viewport) => {
+    const tech = await app.as('tech');
+    const long = (word: string) => word.repeat(200).slice(0, 120);
+    const kiln = await tech.post('/api/kilns', { ...KILN, name: long('Kiln') }).expect(201);
+    const { id: kilnId } = kiln.body as { id: string };
+    const profile = { name: long('Profile'), kilnId, profile: firing() };
+    const made = await tech.post('/api/profiles', profile).expect(201);
+    const { id, version } = made.body as { id: string; version: { id: string } };
+    const plan = { kilnId, profileVersionId: version.id, plannedStartAt: new Date().toISOString() };
+    const run = await tech.post('/api/runs', plan).expect(201);
+    const { page } = await browser.openAs('tech', { viewport });
+    const wide: string[] = [];
+    for (const path of [
+      ...['/', '/kilns', `/kilns/${kilnId}`, '/profiles', `/profiles/${id}`, `/profiles/${id}/versions/1`],
+      ...[
+        `/profiles/${id}/versions/1/print`,
+        '/runs',
+        `/runs/${(run.body as { id: string }).id}`,
+        '/runs/new',
+      ],
+    ]) {
+      await page.goto(path);
+      const sideways = await overflowPx(page);
+      if (sideways > 0) wide.push(`${path}: ${sideways} px`);
+    }
+    expect(wide).toEqual([]);
+  },
+);
 
 const cells = (page: Page, of: string): Promise<string[]> => page.locator(`main tbody ${of}`).allInnerTexts();
 const statesOf = async (page: Page): Promise<string[]> =>
