@@ -120,16 +120,20 @@ export function Figures({ estimate, before, plannedS, hasKiln, isAssumed, startM
         )}
         note={costs.join(', ')}
       />
-      <Figure
-        value={estimate.readyS === null ? 'not ready' : at(estimate.readyS)}
-        hot={estimate.readyS === null}
-        change={
-          estimate.readyS === null
-            ? ''
-            : changeText(estimate.readyS, before?.readyS ?? null, durationText, 30)
-        }
-        note={`${estimate.readyS === null ? 'the mould core does not get there' : 'ready to pour'}, ${openable}`}
-      />
+      {estimate.mould === null ? (
+        <Figure value="–" change="" note={`no mould in the load, ${openable}`} />
+      ) : (
+        <Figure
+          value={estimate.readyS === null ? 'not ready' : at(estimate.readyS)}
+          hot={estimate.readyS === null}
+          change={
+            estimate.readyS === null
+              ? ''
+              : changeText(estimate.readyS, before?.readyS ?? null, durationText, 30)
+          }
+          note={`${estimate.readyS === null ? 'the mould core does not get there' : 'ready to pour'}, ${openable}`}
+        />
+      )}
     </div>
   );
 }

@@ -78,13 +78,16 @@ function LagNote({
   scales,
   estimate,
   scale,
-}: Pick<MarksProps, 'scales' | 'estimate'> & { scale: UnitPreferences['temperature'] }) {
+  hatched,
+}: Pick<MarksProps, 'scales' | 'estimate'> & { scale: UnitPreferences['temperature']; hatched: boolean }) {
   const lag = largestLag(estimate);
   if (!lag || scales.flow === 'down') return null;
   const { x, y } = scales.point(lag.atS, lag.coreC);
   const { box } = scales;
   const right = x + 30 + 190 < box.leftPx + box.widthPx;
-  const below = y + 40 < box.topPx + box.heightPx;
+  // The hatching of the pattern and its name have the foot of the strip.
+  const footPx = hatched ? box.heightPx * (PATTERN_SHARE + 0.12) : 0;
+  const below = y + 40 < box.topPx + box.heightPx - footPx;
   const dx = right ? 1 : -1;
   const dy = below ? 1 : -1;
   return (
@@ -150,7 +153,9 @@ export function MarksOver(
         />
       ))}
       <AsidePeaks scales={scales} layers={props.layers} />
-      {shown.has('core') ? <LagNote scales={scales} estimate={estimate} scale={props.scale} /> : null}
+      {shown.has('core') ? (
+        <LagNote scales={scales} estimate={estimate} scale={props.scale} hatched={shown.has('pattern')} />
+      ) : null}
     </g>
   );
 }

@@ -18,6 +18,8 @@ export interface PaperProps {
   /** Instant of the run's start; null: run time only. */
   readonly startMs: number | null;
   readonly zone: string;
+  /** False where the axis of temperature stands apart, because the strip scrolls under it. */
+  readonly axis?: boolean;
 }
 
 const crisp = (px: number): number => Math.round(px) + 0.5;
@@ -68,17 +70,20 @@ function Glow({ scales }: Pick<PaperProps, 'scales'>) {
   );
 }
 
-function HeatLabels({
-  scales,
-  heat,
-  temperature,
-}: {
-  scales: StripScales;
-  heat: Ruling;
-  temperature: TemperatureUnit;
-}) {
+/** Temperatures that are ruled and labelled, in the unit shown. */
+function useHeatRuling({ view, box, flow }: StripScales, temperature: TemperatureUnit): Ruling {
+  const lengthPx = flow === 'across' ? box.heightPx : box.widthPx;
+  return useMemo(
+    () =>
+      ruleDegrees(shownDegrees(view.minC, temperature), shownDegrees(view.maxC, temperature), lengthPx, 44),
+    [view.minC, view.maxC, temperature, lengthPx],
+  );
+}
+
+function HeatLabels({ scales, temperature }: Pick<PaperProps, 'scales' | 'temperature'>) {
   const { box, flow } = scales;
   const across = flow === 'across';
+  const heat = useHeatRuling(scales, temperature);
   return (
     <g className="strip-numbers">
       {heat.labelled.map((shown) => {
@@ -105,9 +110,19 @@ function HeatLabels({
   );
 }
 
-function TimeLabels({ scales, time, startMs, zone }: Omit<PaperProps, 'temperature'> & { time: Ruling }) {
+function TimeLabels({
+  scales,
+  time,
+  startMs,
+  zone,
+}: Omit<PaperProps, 'temperature' | 'axis'> & { time: Ruling }) {
   const { box, flow, view } = scales;
   const across = flow === 'across';
+  // A label at the very end would be cut off in its middle.
+  const inside = (px: number) =>
+    px + 22 > box.leftPx + box.widthPx + 10
+      ? ({ x: box.leftPx + box.widthPx + 8, textAnchor: 'end' } as const)
+      : ({ x: px, textAnchor: 'middle' } as const);
   const clock = useMemo(
     () =>
       startMs === null
@@ -121,7 +136,7 @@ function TimeLabels({ scales, time, startMs, zone }: Omit<PaperProps, 'temperatu
         const px = scales.timePx(tick.atS);
         const day = tick.day ? <tspan className="strip-words">{`${tick.day.slice(0, 3)} `}</tspan> : null;
         return across ? (
-          <text key={tick.atS} className="strip-clock" x={px} y={box.topPx - 12} textAnchor="middle">
+          <text key={tick.atS} className="strip-clock" y={box.topPx - 12} {...inside(px)}>
             {day}
             {tick.text}
           </text>
@@ -137,9 +152,8 @@ function TimeLabels({ scales, time, startMs, zone }: Omit<PaperProps, 'temperatu
           return (
             <text
               key={timeS}
-              x={across ? px : box.leftPx - 10}
               y={across ? box.topPx + box.heightPx + 19 : px + 4}
-              textAnchor={across ? 'middle' : 'end'}
+              {...(across ? inside(px) : { x: box.leftPx - 10, textAnchor: 'end' })}
             >
               {runTimeText(timeS, time.stepLabelled)}
             </text>
@@ -149,24 +163,25 @@ function TimeLabels({ scales, time, startMs, zone }: Omit<PaperProps, 'temperatu
   );
 }
 
+/** The axis of temperature: its numbers, and the strip of glow. */
+export function Axis({ scales, temperature }: Pick<PaperProps, 'scales' | 'temperature'>) {
+  return (
+    <>
+      <Glow scales={scales} />
+      <HeatLabels scales={scales} temperature={temperature} />
+    </>
+  );
+}
+
 /** The paper: sheet, fine and coarse ruling as on a recorder's roll, glow at the axis, clock above, run time below. */
-export function Paper({ scales, temperature, startMs, zone }: PaperProps) {
+export function Paper({ scales, temperature, startMs, zone, axis = true }: PaperProps) {
   const { box, flow, view } = scales;
   const across = flow === 'across';
   const time = useMemo(
     () => ruleTime(view.fromS, view.toS, across ? box.widthPx : box.heightPx, across ? 100 : 58),
     [view.fromS, view.toS, across, box.widthPx, box.heightPx],
   );
-  const heat = useMemo(
-    () =>
-      ruleDegrees(
-        shownDegrees(view.minC, temperature),
-        shownDegrees(view.maxC, temperature),
-        across ? box.heightPx : box.widthPx,
-        44,
-      ),
-    [view.minC, view.maxC, temperature, across, box.heightPx, box.widthPx],
-  );
+  const heat = useHeatRuling(scales, temperature);
   const inC = (shown: readonly number[]): number[] => shown.map((degrees) => celsiusOf(degrees, temperature));
   return (
     <g aria-hidden="true">
@@ -179,8 +194,7 @@ export function Paper({ scales, temperature, startMs, zone }: PaperProps) {
       />
       <Lines scales={scales} time={time.fine} heatC={inC(heat.fine)} className="strip-fine" />
       <Lines scales={scales} time={time.coarse} heatC={inC(heat.coarse)} className="strip-coarse" />
-      <Glow scales={scales} />
-      <HeatLabels scales={scales} heat={heat} temperature={temperature} />
+      {axis ? <Axis scales={scales} temperature={temperature} /> : null}
       <TimeLabels scales={scales} time={time} startMs={startMs} zone={zone} />
     </g>
   );

@@ -1,7 +1,7 @@
 import { useId, useMemo, useRef, useState, type ReactNode } from 'react';
 import { Curves } from './Curves';
 import type { StripLayer } from './layers';
-import { Paper, type TemperatureUnit } from './Paper';
+import { Axis, Paper, type TemperatureUnit } from './Paper';
 import { Readout } from './Readout';
 import { stripScales, type Flow, type StripScales, type StripView } from './scales';
 import { StripTable, type StripTableContent } from './StripTable';
@@ -75,11 +75,12 @@ function StripBody(props: StripProps & { readonly widthPx: number }) {
   const fullWidth = across ? box.leftPx + box.widthPx + MARGIN.rightPx : widthPx;
   const fullHeight = box.topPx + box.heightPx + (across ? MARGIN.bottomPx : UPRIGHT_MARGIN.bottomPx);
   const size = { width: fullWidth, height: fullHeight };
+  const rolls = across && fullWidth > widthPx + 1;
   return (
     <div className="strip-roll" data-flow={flow} style={across ? { width: fullWidth } : undefined}>
       <div className="strip-chart" style={size}>
         <svg {...size} className="strip-layer" aria-hidden="true">
-          <Paper scales={scales} temperature={temperature} startMs={startMs} zone={zone} />
+          <Paper scales={scales} temperature={temperature} startMs={startMs} zone={zone} axis={!rolls} />
           {props.under?.(scales)}
         </svg>
         <Curves scales={scales} layers={layers} />
@@ -97,6 +98,11 @@ function StripBody(props: StripProps & { readonly widthPx: number }) {
           {props.over?.(scales)}
           <g ref={setTop} />
         </svg>
+        {rolls ? (
+          <svg className="strip-axis" width={box.leftPx - 2} height={fullHeight} aria-hidden="true">
+            <Axis scales={scales} temperature={temperature} />
+          </svg>
+        ) : null}
       </div>
       {props.beside?.(scales)}
     </div>
