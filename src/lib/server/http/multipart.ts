@@ -7,6 +7,7 @@ import { HoldfastError } from '../errors';
 /** Room for the parts' own headers and the small fields beside the file. */
 const OVERHEAD_BYTES = 64 * 1024;
 const MAX_FIELD_BYTES = 16 * 1024;
+const IDLE_MS = 120_000;
 
 /** Takes the file's bytes as they arrive; what it throws ends the upload. */
 export type TakeFile = (fileName: string, bytes: AsyncIterable<Uint8Array>) => Promise<void>;
@@ -60,7 +61,7 @@ export async function receiveFile(
   });
 
   try {
-    await pipeline(Readable.fromWeb(request.body as NodeReadableStream), parser);
+    await pipeline(endedWhenIdle(Readable.fromWeb(request.body as NodeReadableStream)), parser);
   } catch (error) {
     await state.taken;
     if (state.failure instanceof HoldfastError) throw state.failure;
@@ -74,6 +75,19 @@ export async function receiveFile(
   if (state.failure !== null) throw asError(state.failure);
   if (!state.taken) throw new HoldfastError('malformed', "The upload holds no part named 'file'.");
   return fields;
+}
+
+/** Breaks a stream off when nothing comes for a while: what it holds open is wanted by others. */
+function endedWhenIdle(source: Readable): Readable {
+  let timer: NodeJS.Timeout | undefined;
+  const again = () => {
+    clearTimeout(timer);
+    timer = setTimeout(() => source.destroy(new Error('no byte came')), IDLE_MS);
+    timer.unref();
+  };
+  again();
+  source.on('data', again).once('close', () => clearTimeout(timer));
+  return source;
 }
 
 function openParser(type: string, maxBytes: number): busboy.Busboy {

@@ -16,6 +16,7 @@ import { logView } from './logs';
 import { isUuid, mayWriteRun, readableRun, writableRun } from './run-access';
 import { settleRun } from './run-review';
 import { emptyLoad, frozenNow } from './runs';
+import { withUploadSlot } from './upload-slots';
 
 export interface Imported {
   readonly log: Log;
@@ -37,7 +38,7 @@ type Outcome =
 export async function importLog(actor: Actor, runId: string, receive: Receive): Promise<Imported> {
   const run = await runForLog(actor, runId);
   try {
-    const outcome = await inTransaction((tx) => takeUpload(actor, run, receive, tx));
+    const outcome = await withUploadSlot(() => inTransaction((tx) => takeUpload(actor, run, receive, tx)));
     return settled(outcome);
   } catch (error) {
     if (error instanceof KeptBefore) return readKeptAs(actor, run, error);
