@@ -29,6 +29,8 @@ export default defineConfig({
           // One browser at a time: two on two cores would wait for each other.
           poolOptions: { forks: { singleFork: true } },
           testTimeout: 180_000,
+          // What a page sends when it has settled takes its time on a busy machine.
+          expect: { poll: { timeout: 10_000 } },
         },
       },
     ],
