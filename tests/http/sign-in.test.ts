@@ -47,19 +47,6 @@ describe('signing in', () => {
     expect(wrong.body).toMatchObject({ code: 'wrong-credentials', status: 401 });
   });
 
-  it('takes as long for an unknown address as for a wrong password', async () => {
-    const time = async (email: string) => {
-      const startMs = performance.now();
-      await app.visitor().post('/api/auth/sign-in', { email, password: 'not the one' });
-      return performance.now() - startMs;
-    };
-    const unknown = [await time('no1@quarrylane.example'), await time('no2@quarrylane.example')];
-    const known = [await time('owner@ferryroad.example'), await time('tech@ferryroad.example')];
-    // A compare at cost 11 takes far longer than everything else in the call; without it the ratio would be 10 or more.
-    expect(Math.min(...known) / Math.min(...unknown)).toBeLessThan(3);
-    expect(Math.min(...unknown) / Math.min(...known)).toBeLessThan(3);
-  });
-
   it('refuses a forged and a foreign cookie', async () => {
     const forged = `eyJhbGciOiJub25lIn0.${Buffer.from(JSON.stringify({ aud: 'session', sub: app.db.people.tech.id })).toString('base64url')}.`;
     for (const value of [forged, 'x.y.z', 'a'.repeat(5000)])
