@@ -1,7 +1,7 @@
 import type { APIContext, MiddlewareNext } from 'astro';
 import { defineMiddleware } from 'astro:middleware';
 import { randomUUID } from 'node:crypto';
-import { judge, ruleOf } from '~/lib/server/auth/access';
+import { isOpen, judge, ruleOf } from '~/lib/server/auth/access';
 import { requireOwnOrigin, siteOrigin } from '~/lib/server/auth/origin';
 import { clearSession, readSessionId } from '~/lib/server/auth/session-cookie';
 import { HoldfastError, PROBLEMS } from '~/lib/server/errors';
@@ -39,7 +39,7 @@ export const onRequest = defineMiddleware(async (context, next) => {
 async function answer(context: APIContext, next: MiddlewareNext): Promise<Response> {
   try {
     requireOwnOrigin(context.request, siteOrigin(context.request));
-    if (!isOpen(context)) await signInFromCookie(context);
+    if (!needsNobody(context)) await signInFromCookie(context);
     const refusal = refuse(context);
     return refusal ?? (await next());
   } catch (error) {
@@ -50,9 +50,7 @@ async function answer(context: APIContext, next: MiddlewareNext): Promise<Respon
 const isApi = (context: APIContext): boolean => context.url.pathname.startsWith('/api/');
 
 /** Answers that must not wait for the database, such as health. */
-const isOpen = (context: APIContext): boolean =>
-  isApi(context) &&
-  Object.values(ruleOf(context.routePattern)?.methods ?? {}).every((who) => who === 'anyone');
+const needsNobody = (context: APIContext): boolean => isApi(context) && isOpen(ruleOf(context.routePattern));
 
 async function signInFromCookie(context: APIContext): Promise<void> {
   const id = await readSessionId(context.cookies);

@@ -36,9 +36,12 @@ export function frontOf(handler, { trustedProxies = [], https = false } = {}) {
   };
 }
 
+/** The path in plain letters; null where path or query cannot be read. */
 function pathOf(url) {
   try {
-    return decodeURIComponent(new URL(url ?? '/', 'http://localhost').pathname);
+    const { pathname, search } = new URL(url ?? '/', 'http://localhost');
+    decodeURIComponent(search);
+    return decodeURIComponent(pathname);
   } catch {
     return null;
   }

@@ -15,6 +15,7 @@ import {
 } from '~/lib/server/services/handouts';
 import { createKiln } from '~/lib/server/services/kilns';
 import { createProfile, retireVersion } from '~/lib/server/services/profiles';
+import { createRun, startRun } from '~/lib/server/services/runs';
 import { testDatabase } from '../helpers/database';
 import {
   addPerson,
@@ -240,6 +241,20 @@ describe('acknowledging', () => {
 });
 
 describe('what a student may fire', () => {
+  it('is nothing that was retired since, though handed out and acknowledged', async () => {
+    const one = await approvedVersion(db.people, kilnId, 'Taken out of use');
+    const { id, cautions } = await handOut({ profileVersionId: one.version.id });
+    await acknowledgeHandout(student.actor, id, cautions.length, day(3));
+    const run = await createRun(student.actor, {
+      kilnId,
+      profileVersionId: one.version.id,
+      plannedStartAt: day(4).toISOString(),
+    });
+    await retireVersion(teacher.actor, one.profileId, 1, { reason: 'The shell cracked twice.' });
+    const refused = await refusal(startRun(student.actor, run.id, {}, day(4)));
+    expect([refused.status, refused.message]).toEqual([409, expect.stringMatching(/retired/)]);
+  });
+
   it('is what was handed out for this kiln, within its dates, once its cautions are acknowledged', async () => {
     const one = await approvedVersion(db.people, kilnId, 'To be fired');
     const run = { versionId: one.version.id, kilnId, at: day(4) };
@@ -253,6 +268,16 @@ describe('what a student may fire', () => {
     expect(await statusOf(handoutForRun(mate, run))).toBe(409);
     await withdrawHandout(teacher.actor, id, 'No more', day(4));
     expect(await statusOf(handoutForRun(student.actor, run))).toBe(403);
+  });
+});
+
+describe('a run that a technician plans under a handout', () => {
+  it('names one that stands', async () => {
+    const { id } = await handOut();
+    const run = { kilnId, profileVersionId: version.id, plannedStartAt: day(4).toISOString(), handoutId: id };
+    expect((await createRun(tech.actor, run)).handoutId).toBe(id);
+    await withdrawHandout(teacher.actor, id, 'No more', day(4));
+    expect(await statusOf(createRun(tech.actor, run))).toBe(409);
   });
 });
 

@@ -11,6 +11,7 @@ import {
   personSchema,
   revisionSchema,
   roleSchema,
+  wordsSchema,
 } from './common';
 import { defineRoute } from './route';
 import { versionSchema } from './profiles';
@@ -142,7 +143,8 @@ export const handoutRoutes = {
     method: 'POST',
     path: '/api/handouts/{id}/acknowledge',
     summary: 'Say that the cautions were read',
-    body: z.strictObject({ cautions: z.number().int().min(0) }),
+    /** How many were read, checked against how many the handout shows; left out: all of them. */
+    body: z.strictObject({ cautions: z.number().int().min(0).optional() }),
     response: handoutSchema,
     problems: [409],
   }),
@@ -150,7 +152,7 @@ export const handoutRoutes = {
     method: 'POST',
     path: '/api/handouts/{id}/withdraw',
     summary: 'Withdraw a handout',
-    body: z.strictObject({ reason: z.string().trim().min(1).max(2000) }),
+    body: z.strictObject({ reason: wordsSchema(2000) }),
     response: handoutSchema,
     problems: [409],
   }),

@@ -7,6 +7,8 @@ import { defineRoute } from './route';
 /** What every kept thing answers with beside its own fields. */
 const kept = {
   id: idSchema,
+  // As it was kept, under whatever rule for names then held.
+  name: z.string(),
   revision: revisionSchema,
   createdAt: instantSchema,
   updatedAt: instantSchema,

@@ -11,6 +11,8 @@ import {
   noteSchema,
   personSchema,
   revisionSchema,
+  versionNumberSchema,
+  wordsSchema,
 } from './common';
 import { describedKilnSchema } from './equipment';
 import { defineRoute } from './route';
@@ -147,7 +149,7 @@ export const profileRoutes = {
     path: '/api/profiles/{id}/duplicate',
     summary: 'A new profile, drafted from a version of this one',
     status: 201,
-    body: z.strictObject({ version: z.number().int().min(1).optional(), name: nameSchema.optional() }),
+    body: z.strictObject({ version: versionNumberSchema.optional(), name: nameSchema.optional() }),
     response: z.strictObject({
       id: idSchema,
       name: z.string(),
@@ -162,7 +164,7 @@ export const profileRoutes = {
     status: 201,
     response: versionSchema,
     problems: [409],
-    body: z.union([contentSchema, z.strictObject({ from: z.number().int().min(1) })]),
+    body: z.union([contentSchema, z.strictObject({ from: versionNumberSchema })]),
   }),
   getVersion: defineRoute({ method: 'GET', path: at, summary: 'One version', response: versionSchema }),
   putVersion: defineRoute({
@@ -194,7 +196,7 @@ export const profileRoutes = {
           z.strictObject({
             code: z.string().max(60),
             segment: z.number().int().nullable(),
-            reason: z.string().trim().min(1).max(2000),
+            reason: wordsSchema(2000),
           }),
         )
         .max(100)
@@ -208,12 +210,12 @@ export const profileRoutes = {
     response: versionSchema,
     problems: [409],
     body: z.strictObject({
-      remark: z.string().trim().min(1).max(4000),
+      remark: wordsSchema(4000),
       segments: z
         .array(
           z.strictObject({
             segment: z.number().int().min(0).max(63),
-            remark: z.string().trim().min(1).max(2000),
+            remark: wordsSchema(2000),
           }),
         )
         .max(64)
@@ -224,7 +226,7 @@ export const profileRoutes = {
     method: 'POST',
     path: `${at}/retire`,
     summary: 'Retire an approved version',
-    body: z.strictObject({ reason: z.string().trim().min(1).max(2000) }),
+    body: z.strictObject({ reason: wordsSchema(2000) }),
     response: versionSchema,
     problems: [409],
   }),

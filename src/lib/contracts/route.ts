@@ -58,6 +58,10 @@ export function defineRoute<
   };
 }
 
+/** Whether an action may come without a body: its schema asks for nothing. */
+export const bodyMayBeLeftOut = ({ method, body }: Route): boolean =>
+  method === 'POST' && body !== undefined && body.safeParse({}).success;
+
 /** Names of the parameters in a path: `ParamsOf<'/api/kilns/{id}'>` is `{ id: string }`. */
 export type ParamsOf<Path extends string> = Path extends `${string}{${infer Name}}${infer Rest}`
   ? { [K in Name | keyof ParamsOf<Rest>]: string }

@@ -8,6 +8,7 @@ import {
   noteSchema,
   personSchema,
   revisionSchema,
+  wordsSchema,
 } from './common';
 import { defineRoute } from './route';
 import { profileSchema } from '../profile/schema';
@@ -122,7 +123,7 @@ export const runRoutes = {
     method: 'POST',
     path: `${one}/abandon`,
     summary: 'Break the run off',
-    body: z.strictObject({ reason: z.string().trim().min(1).max(2000) }),
+    body: z.strictObject({ reason: wordsSchema(2000) }),
     response: runSchema,
     problems: [409],
   }),

@@ -1,7 +1,7 @@
 import { version } from '../../../package.json' with { type: 'json' };
 import { problemSchema } from '~/lib/contracts/common';
 import { allRoutes } from '~/lib/contracts';
-import type { Route } from '~/lib/contracts/route';
+import { bodyMayBeLeftOut, type Route } from '~/lib/contracts/route';
 import { z } from '~/lib/zod';
 import { ruleOf } from './auth/access';
 import { PROBLEMS } from './errors';
@@ -122,7 +122,8 @@ function requestBody(route: Route): Json {
       },
     },
   };
-  return json || raw ? { requestBody: { required: true, content: { ...json, ...raw } } } : {};
+  const required = !bodyMayBeLeftOut(route);
+  return json || raw ? { requestBody: { required, content: { ...json, ...raw } } } : {};
 }
 
 function responses(route: Route, open: boolean): Json {

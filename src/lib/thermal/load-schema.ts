@@ -54,7 +54,7 @@ export type Furniture = z.infer<typeof furnitureSchema>;
 export const pourSchema = z.strictObject({
   metal: materialId,
   chargeKg: massKg,
-  furnaceId: z.uuid().nullable().default(null),
+  furnaceId: z.uuid().toLowerCase().nullable().default(null),
   pourC: z.number().min(100).max(1800),
   carryS: z.number().min(0).max(3600).default(30),
 });

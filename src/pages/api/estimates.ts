@@ -5,4 +5,4 @@ import { estimateFiring } from '~/lib/server/services/estimates';
 export const POST = endpoint(routes.estimates.estimate, ({ actor, body, query }) =>
   estimateFiring(actor, body, query),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

@@ -6,4 +6,4 @@ export const GET = publicEndpoint(routes.site.health, async () => {
   const state = await health();
   return state.status === 'ok' ? state : new Answer(state, 503, { 'retry-after': '5' });
 });
-export const ALL = methodNotAllowed('GET');
+export const ALL = methodNotAllowed({ GET });

@@ -3,4 +3,4 @@ import { materials } from '~/lib/materials';
 import { endpoint, methodNotAllowed } from '~/lib/server/http/endpoint';
 
 export const GET = endpoint(routes.materials.list, () => Promise.resolve(materials));
-export const ALL = methodNotAllowed('GET');
+export const ALL = methodNotAllowed({ GET });

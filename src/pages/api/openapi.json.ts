@@ -3,4 +3,4 @@ import { json, methodNotAllowed } from '~/lib/server/http/endpoint';
 import { openApiDocument } from '~/lib/server/openapi';
 
 export const GET: APIRoute = () => json(openApiDocument());
-export const ALL = methodNotAllowed('GET');
+export const ALL = methodNotAllowed({ GET });

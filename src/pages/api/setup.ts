@@ -8,4 +8,4 @@ export const POST = publicEndpoint(routes.auth.setUp, async ({ body, context }) 
   await admit(context, sessionId, me.user.id);
   return me;
 });
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

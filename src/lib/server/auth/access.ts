@@ -132,6 +132,10 @@ const RULES: ReadonlyMap<string, AccessRule> = new Map(ACCESS.map((rule) => [rul
 export const ruleOf = (routePattern: string): AccessRule | undefined =>
   RULES.get(routePattern.length > 1 ? routePattern.replace(/\/$/, '').toLowerCase() : routePattern);
 
+/** Whether every method that the route has is for anyone: nothing about it depends on who asks. */
+export const isOpen = (rule: AccessRule | undefined): boolean =>
+  Object.values(rule?.methods ?? {}).every((who) => who === 'anyone');
+
 /** What the table says of one request. `unlisted`: nothing is offered there. */
 export function judge(
   routePattern: string,
@@ -142,8 +146,8 @@ export function judge(
   if (!rule) return 'unlisted';
   const who = rule.methods[(method === 'HEAD' ? 'GET' : method) as Method];
   if (who === 'anyone') return 'allowed';
-  if (!roles) return 'sign-in-first';
+  if (!roles && !isOpen(rule)) return 'sign-in-first';
   if (who === undefined) return 'wrong-method';
   if (who === 'signed-in') return 'allowed';
-  return who.some((role) => roles.includes(role)) ? 'allowed' : 'wrong-role';
+  return who.some((role) => roles?.includes(role)) ? 'allowed' : 'wrong-role';
 }

@@ -1,5 +1,5 @@
 import type { APIContext, APIRoute } from 'astro';
-import type { ParamsOf, Route } from '~/lib/contracts/route';
+import { bodyMayBeLeftOut, type Method, type ParamsOf, type Route } from '~/lib/contracts/route';
 import type { z } from '~/lib/zod';
 import type { Actor } from '../auth/actor';
 import { HoldfastError } from '../errors';
@@ -46,9 +46,7 @@ export function publicEndpoint<R extends Route>(route: R, act: Act<PublicCall<R>
       actor: context.locals.actor ?? null,
       params: context.params as ParamsOf<R['path']>,
       query: parse(route.query, queryOf(context.url), 'query') as Parsed<R['query']>,
-      body: (route.body ? parse(route.body, await readJson(context.request), 'body') : undefined) as Parsed<
-        R['body']
-      >,
+      body: (await bodyOf(route, context.request)) as Parsed<R['body']>,
       revision: route.revision ? revisionOf(context.request) : 0,
       context,
     };
@@ -56,6 +54,12 @@ export function publicEndpoint<R extends Route>(route: R, act: Act<PublicCall<R>
     const answer = result instanceof Answer ? result : new Answer(result, route.status);
     return json(route.response.parse(answer.data), answer.status, answer.headers);
   };
+}
+
+/** The body by its schema; an action whose schema asks for nothing may come without one. */
+async function bodyOf(route: Route, request: Request): Promise<unknown> {
+  if (!route.body) return undefined;
+  return parse(route.body, await readJson(request, bodyMayBeLeftOut(route)), 'body');
 }
 
 function queryOf(url: URL): Record<string, string> {
@@ -104,9 +108,15 @@ export function json(data: unknown, status = 200, headers: Readonly<Record<strin
   });
 }
 
-/** Exported as `ALL` beside the methods of a file: any other method is refused as a problem, not as a page. */
-export function methodNotAllowed(...allowed: readonly string[]): APIRoute {
-  return ({ request }) => {
+/**
+ * Exported as `ALL` beside the methods of a file: HEAD is GET without the body, any other method is refused as a problem,
+ * not as a page.
+ */
+export function methodNotAllowed(offered: Readonly<Partial<Record<Method, APIRoute>>>): APIRoute {
+  const allowed = Object.keys(offered);
+  return async (context) => {
+    const { request } = context;
+    if (request.method === 'HEAD' && offered.GET) return withoutBody(await offered.GET(context));
     const response = problemResponse(
       new HoldfastError(
         'method-not-allowed',
@@ -116,4 +126,9 @@ export function methodNotAllowed(...allowed: readonly string[]): APIRoute {
     response.headers.set('allow', allowed.join(', '));
     return response;
   };
+}
+
+async function withoutBody(answer: Response): Promise<Response> {
+  await answer.body?.cancel();
+  return new Response(null, answer);
 }

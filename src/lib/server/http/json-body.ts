@@ -5,9 +5,18 @@ export const MAX_JSON_BYTES = 1024 * 1024;
 /** Whether the database can keep a text as it is: no NUL, no half of a surrogate pair. */
 export const isStorable = (text: string): boolean => !text.includes('\0') && !/\p{Surrogate}/u.test(text);
 
-/** Reads a JSON body, counting bytes as they stream, so that a large body is refused before it is held in memory. */
-export async function readJson(request: Request, maxBytes = MAX_JSON_BYTES): Promise<unknown> {
+/**
+ * Reads a JSON body, counting bytes as they stream, so that a large body is refused before it is held in memory.
+ *
+ * @param mayBeLeftOut a call without a body, and with no content type but JSON's, is one with `{}`
+ */
+export async function readJson(
+  request: Request,
+  mayBeLeftOut = false,
+  maxBytes = MAX_JSON_BYTES,
+): Promise<unknown> {
   const type = request.headers.get('content-type') ?? '';
+  if (mayBeLeftOut && type === '' && (await readText(request, maxBytes)) === '') return {};
   if (!/^application\/json(\s*;|$)/i.test(type)) {
     throw new HoldfastError(
       'wrong-type',
@@ -15,6 +24,7 @@ export async function readJson(request: Request, maxBytes = MAX_JSON_BYTES): Pro
     );
   }
   const text = await readText(request, maxBytes);
+  if (text === '' && mayBeLeftOut) return {};
   if (text.trim() === '') throw new HoldfastError('malformed', 'The body is empty; expected a JSON object.');
   try {
     return JSON.parse(text, (key, value: unknown) => {

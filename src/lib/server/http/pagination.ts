@@ -15,7 +15,7 @@ export function decodeCursor(cursor: string | undefined): { sort: string | numbe
       if (
         (typeof sort === 'number' || (typeof sort === 'string' && isStorable(sort))) &&
         typeof id === 'string' &&
-        /^[0-9a-f-]{36}$/.test(id)
+        /^[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}$/.test(id)
       )
         return { sort, id };
     }

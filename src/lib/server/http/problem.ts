@@ -26,7 +26,13 @@ export function problemResponse(error: HoldfastError): Response {
 
 /** Paths and sentences of a failed parse, at most fifty. */
 export function issuesOf(error: z.ZodError): Issue[] {
-  return error.issues
-    .slice(0, 50)
-    .map((issue) => ({ path: issue.path.map(String).join('.'), message: issue.message }));
+  return error.issues.flatMap(issuesIn).slice(0, 50);
+}
+
+/** A field that may not be there is named by its own path, not by that of the thing it is in. */
+function issuesIn(issue: z.core.$ZodIssue): Issue[] {
+  const at = (...more: readonly string[]) => [...issue.path.map(String), ...more].join('.');
+  return issue.code === 'unrecognized_keys'
+    ? issue.keys.map((key) => ({ path: at(key), message: 'no such field here' }))
+    : [{ path: at(), message: issue.message }];
 }

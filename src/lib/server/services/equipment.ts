@@ -32,7 +32,10 @@ export function equipmentService<Thing extends Kept, Input>(kind: EquipmentKind<
   async function get(actor: Actor, id: string, tx?: Tx): Promise<Thing> {
     const thing = isUuid(id) ? await repository.find(actor.studioId, id, tx) : null;
     if (!thing) throw notFound(kind.noun);
-    if (isOnlyStudent(actor) && !(await kind.idsForPerson(actor.studioId, actor.userId, tx)).includes(id))
+    if (
+      isOnlyStudent(actor) &&
+      !(await kind.idsForPerson(actor.studioId, actor.userId, tx)).includes(thing.id)
+    )
       throw notFound(kind.noun);
     return show(actor, thing);
   }
@@ -95,7 +98,9 @@ function parseWhole<Input>(schema: z.ZodType<Input>, whole: unknown): Input {
   const result = schema.safeParse(whole);
   if (result.success) return result.data;
   const issues = issuesOf(result.error);
-  throw notValid(`With this change it is not valid. ${issues[0]?.path}: ${issues[0]?.message}.`, issues);
+  const [first] = issues;
+  const found = first ? `${first.path || 'body'}: ${first.message}` : 'body';
+  throw notValid(`With this change it is not valid. ${found}.`, issues);
 }
 
 function whenArchived(archived: unknown, current: Kept): Date | null {

@@ -1,7 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import type { z } from '~/lib/zod';
 import type { Handout, HandoutCaution, handoutRoutes } from '~/lib/contracts/classes';
-import type { ListQuery } from '~/lib/contracts/common';
+import { instantSchema, type ListQuery } from '~/lib/contracts/common';
 import type { Version } from '~/lib/contracts/profiles';
 import { SAFETY_NOTES, safetyNotesFor } from '~/lib/profile/safety';
 import type { Caution } from '~/lib/thermal/estimate-schema';
@@ -41,7 +41,7 @@ const shown = (handout: HandoutRecord, now: Date): Handout => ({ ...handout, sta
 
 export async function listHandouts(actor: Actor, query: ListQuery, now = new Date()) {
   const after = decodeCursor(query.cursor);
-  if (after && Number.isNaN(Date.parse(String(after.sort))))
+  if (after && !instantSchema.safeParse(after.sort).success)
     throw new HoldfastError('malformed', 'This cursor is of another list. Start the list again without it.');
   const rows = await listRows({
     studioId: actor.studioId,
@@ -110,11 +110,15 @@ export async function createHandout(
   });
 }
 
-/** Keeps that the actor, whom the handout is for, has read its cautions: as many as are shown. */
+/**
+ * Keeps that the actor, whom the handout is for, has read its cautions.
+ *
+ * @param cautions how many were read; it must be as many as the handout shows, and where it is left out it is
+ */
 export async function acknowledgeHandout(
   actor: Actor,
   id: string,
-  cautions: number,
+  cautions: number | undefined,
   now = new Date(),
 ): Promise<Handout> {
   return inTransaction(async (tx) => {
@@ -126,12 +130,13 @@ export async function acknowledgeHandout(
       throw wrongState(
         `This handout is ${state === 'over' ? 'over' : 'withdrawn'}; nothing is to be acknowledged.`,
       );
-    if (cautions !== handout.cautions.length)
+    const shownCautions = handout.cautions.length;
+    if (cautions !== undefined && cautions !== shownCautions)
       throw wrongState(
-        `This handout shows ${handout.cautions.length} cautions, ${cautions} were acknowledged. Read all of them.`,
+        `This handout shows ${shownCautions} cautions, ${cautions} were acknowledged. Read all of them.`,
       );
     const { studioId, userId } = actor;
-    await insertAcknowledgement({ studioId, handoutId: id, userId, cautions, at: now }, tx);
+    await insertAcknowledgement({ studioId, handoutId: id, userId, cautions: shownCautions, at: now }, tx);
     await trail(tx, actor, 'acknowledged', id);
     return getHandout(actor, id, now, tx);
   });
@@ -168,6 +173,9 @@ export async function handoutForRun(
   );
   if (offers.length === 0)
     throw notAllowed('This version was not handed out to you for this kiln. Ask a technician to fire it.');
+  const { version } = await versionById(actor, run.versionId, tx);
+  if (version.state === 'retired')
+    throw wrongState(`Version ${version.number} is retired. Ask for a handout of one that is in force.`);
   const inForce = offers.filter((offer) => offer.fromAt <= run.at && run.at <= offer.untilAt);
   if (inForce.length === 0)
     throw wrongState('The handout is not in force at that moment. Choose a start within its dates.');
@@ -182,6 +190,7 @@ export async function handoutNamed(actor: Actor, id: string, versionId: string, 
   if (!handout) throw notFound('handout');
   if (handout.version.id !== versionId)
     throw wrongState('This handout is of another version than the one to be fired.');
+  if (handout.withdrawnAt !== null) throw wrongState('This handout was withdrawn. Choose one that stands.');
   return id;
 }
 

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import type { z } from '~/lib/zod';
+import { instantSchema } from '~/lib/contracts/common';
 import type { profileRoutes, ProfileDetail, ProfileSummary, Version } from '~/lib/contracts/profiles';
 import { type Actor, hasRole } from '../auth/actor';
 import { inTransaction, type Tx } from '../database';
@@ -33,7 +34,7 @@ interface NewProfile {
 
 export async function listProfiles(actor: Actor, query: z.output<(typeof profileRoutes)['list']['query']>) {
   const after = decodeCursor(query.cursor);
-  if (after && Number.isNaN(Date.parse(String(after.sort))))
+  if (after && !instantSchema.safeParse(after.sort).success)
     throw new HoldfastError('malformed', 'This cursor is of another list. Start the list again without it.');
   const rows = await listRows({
     studioId: actor.studioId,

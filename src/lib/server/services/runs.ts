@@ -4,7 +4,7 @@ import type { Run, runRoutes } from '~/lib/contracts/runs';
 import { loadSchema, type Load } from '~/lib/thermal/load-schema';
 import { hasRole, isOnlyStudent, requireRole, type Actor } from '../auth/actor';
 import { inTransaction, type Tx } from '../database';
-import { notAllowed, notValid, staleRevision, wrongState } from '../errors';
+import { HoldfastError, notAllowed, notValid, staleRevision, wrongState } from '../errors';
 import { decodeCursor, page } from '../http/pagination';
 import {
   findRun,
@@ -29,6 +29,8 @@ const CLOCK_SLACK_MS = 5 * 60_000;
 
 export async function listRuns(actor: Actor, query: z.output<(typeof runRoutes)['list']['query']>) {
   const after = decodeCursor(query.cursor);
+  if (after && !isRunNumber(after.sort))
+    throw new HoldfastError('malformed', 'This cursor is of another list. Start the list again without it.');
   const records = await listRows({
     studioId: actor.studioId,
     recorderId: isOnlyStudent(actor) ? actor.userId : undefined,
@@ -36,7 +38,7 @@ export async function listRuns(actor: Actor, query: z.output<(typeof runRoutes)[
     kilnId: query.kilnId,
     profileId: query.profileId,
     q: query.q || undefined,
-    beforeNumber: after ? Number(after.sort) : undefined,
+    beforeNumber: after?.sort as number | undefined,
     limit: query.limit + 1,
   });
   return page(
@@ -44,6 +46,15 @@ export async function listRuns(actor: Actor, query: z.output<(typeof runRoutes)[
     query.limit,
     (run) => run.number,
   );
+}
+
+const isRunNumber = (sort: unknown): boolean => Number.isInteger(sort) && Math.abs(Number(sort)) < 2 ** 31;
+
+/** A kiln that a run may be planned in. */
+async function kilnInUse(actor: Actor, id: string, tx: Tx) {
+  const kiln = await kilnFor(actor, id, tx);
+  if (kiln.archivedAt !== null) throw wrongState(`${kiln.name} is archived. Choose a kiln that is in use.`);
+  return kiln;
 }
 
 export async function getRun(actor: Actor, id: string): Promise<Run> {
@@ -56,7 +67,7 @@ export async function createRun(actor: Actor, body: Body<(typeof runRoutes)['cre
     const version = await versionForRun(actor, body.profileVersionId, tx);
     if (version.state === 'retired')
       throw wrongState('This version is retired. Choose one that is in force.');
-    const kiln = await kilnFor(actor, body.kilnId, tx);
+    const kiln = await kilnInUse(actor, body.kilnId, tx);
     const plannedStartAt = new Date(body.plannedStartAt);
     const technician = hasRole(actor, 'technician');
     const named =
@@ -105,7 +116,7 @@ export async function updateRun(
         throw wrongState(`Run ${run.number} has begun: its kiln, load and start stay as they were.`);
     }
     requireKnownMaterials(plan.load);
-    if (plan.kilnId !== undefined) await kilnFor(actor, plan.kilnId, tx);
+    if (plan.kilnId !== undefined && plan.kilnId !== run.kiln.id) await kilnInUse(actor, plan.kilnId, tx);
     if (plan.recorderIds !== undefined) {
       await requirePeople(actor, plan.recorderIds, tx);
       await replaceRecorders(actor.studioId, id, plan.recorderIds, tx);

@@ -6,4 +6,4 @@ export const POST = endpoint(routes.auth.changePassword, async ({ actor, body, c
   await changePassword(actor, body.currentPassword, body.newPassword, context.clientAddress);
   return {};
 });
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

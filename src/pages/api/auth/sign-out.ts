@@ -8,4 +8,4 @@ export const POST = endpoint(routes.auth.signOut, async ({ actor, context }) => 
   clearSession(context.cookies);
   return {};
 });
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

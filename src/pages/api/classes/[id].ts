@@ -6,4 +6,4 @@ export const GET = endpoint(routes.classes.get, ({ actor, params }) => getClass(
 export const PATCH = endpoint(routes.classes.update, ({ actor, params, revision, body }) =>
   updateClass(actor, params.id, revision, body),
 );
-export const ALL = methodNotAllowed('GET', 'PATCH');
+export const ALL = methodNotAllowed({ GET, PATCH });

@@ -4,4 +4,4 @@ import { createClass, listClasses } from '~/lib/server/services/classes';
 
 export const GET = endpoint(routes.classes.list, ({ actor, query }) => listClasses(actor, query));
 export const POST = endpoint(routes.classes.create, ({ actor, body }) => createClass(actor, body));
-export const ALL = methodNotAllowed('GET', 'POST');
+export const ALL = methodNotAllowed({ GET, POST });

@@ -6,4 +6,4 @@ export const GET = endpoint(routes.furnaces.get, ({ actor, params }) => getFurna
 export const PATCH = endpoint(routes.furnaces.update, ({ actor, params, revision, body }) =>
   updateFurnace(actor, params.id, revision, body),
 );
-export const ALL = methodNotAllowed('GET', 'PATCH');
+export const ALL = methodNotAllowed({ GET, PATCH });

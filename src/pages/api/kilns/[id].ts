@@ -6,4 +6,4 @@ export const GET = endpoint(routes.kilns.get, ({ actor, params }) => getKiln(act
 export const PATCH = endpoint(routes.kilns.update, ({ actor, params, revision, body }) =>
   updateKiln(actor, params.id, revision, body),
 );
-export const ALL = methodNotAllowed('GET', 'PATCH');
+export const ALL = methodNotAllowed({ GET, PATCH });

@@ -6,4 +6,4 @@ export const GET = endpoint(routes.tariffs.get, ({ actor, params }) => getTariff
 export const PATCH = endpoint(routes.tariffs.update, ({ actor, params, revision, body }) =>
   updateTariff(actor, params.id, revision, body),
 );
-export const ALL = methodNotAllowed('GET', 'PATCH');
+export const ALL = methodNotAllowed({ GET, PATCH });

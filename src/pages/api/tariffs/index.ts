@@ -4,4 +4,4 @@ import { createTariff, listTariffs } from '~/lib/server/services/tariffs';
 
 export const GET = endpoint(routes.tariffs.list, ({ actor, query }) => listTariffs(actor, query));
 export const POST = endpoint(routes.tariffs.create, ({ actor, body }) => createTariff(actor, body));
-export const ALL = methodNotAllowed('GET', 'POST');
+export const ALL = methodNotAllowed({ GET, POST });

@@ -8,4 +8,4 @@ export const GET = endpoint(routes.thermocouples.get, ({ actor, params }) =>
 export const PATCH = endpoint(routes.thermocouples.update, ({ actor, params, revision, body }) =>
   updateThermocouple(actor, params.id, revision, body),
 );
-export const ALL = methodNotAllowed('GET', 'PATCH');
+export const ALL = methodNotAllowed({ GET, PATCH });

@@ -6,4 +6,4 @@ export const GET = endpoint(routes.thermocouples.list, ({ actor, query }) => lis
 export const POST = endpoint(routes.thermocouples.create, ({ actor, body }) =>
   createThermocouple(actor, body),
 );
-export const ALL = methodNotAllowed('GET', 'POST');
+export const ALL = methodNotAllowed({ GET, POST });

@@ -9,4 +9,4 @@ export const DELETE = endpoint(routes.auth.endSession, async ({ actor, params, c
   if (params.id === actor.sessionId) clearSession(context.cookies);
   return {};
 });
-export const ALL = methodNotAllowed('DELETE');
+export const ALL = methodNotAllowed({ DELETE });

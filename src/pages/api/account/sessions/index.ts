@@ -6,4 +6,4 @@ export const GET = endpoint(routes.auth.sessions, async ({ actor }) => ({
   items: await ownSessions(actor),
   nextCursor: null,
 }));
-export const ALL = methodNotAllowed('GET');
+export const ALL = methodNotAllowed({ GET });

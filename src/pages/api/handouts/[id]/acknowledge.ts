@@ -5,4 +5,4 @@ import { acknowledgeHandout } from '~/lib/server/services/handouts';
 export const POST = endpoint(routes.handouts.acknowledge, ({ actor, params, body }) =>
   acknowledgeHandout(actor, params.id, body.cautions),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

@@ -3,4 +3,4 @@ import { endpoint, methodNotAllowed } from '~/lib/server/http/endpoint';
 import { getHandout } from '~/lib/server/services/handouts';
 
 export const GET = endpoint(routes.handouts.get, ({ actor, params }) => getHandout(actor, params.id));
-export const ALL = methodNotAllowed('GET');
+export const ALL = methodNotAllowed({ GET });

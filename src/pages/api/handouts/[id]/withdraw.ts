@@ -5,4 +5,4 @@ import { withdrawHandout } from '~/lib/server/services/handouts';
 export const POST = endpoint(routes.handouts.withdraw, ({ actor, params, body }) =>
   withdrawHandout(actor, params.id, body.reason),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

@@ -5,4 +5,4 @@ import { duplicateProfile } from '~/lib/server/services/profiles';
 export const POST = endpoint(routes.profiles.duplicate, ({ actor, params, body }) =>
   duplicateProfile(actor, params.id, body),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

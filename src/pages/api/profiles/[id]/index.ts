@@ -6,4 +6,4 @@ export const GET = endpoint(routes.profiles.get, ({ actor, params }) => getProfi
 export const PATCH = endpoint(routes.profiles.update, ({ actor, params, revision, body }) =>
   updateProfile(actor, params.id, revision, body),
 );
-export const ALL = methodNotAllowed('GET', 'PATCH');
+export const ALL = methodNotAllowed({ GET, PATCH });

@@ -5,4 +5,4 @@ import { abandonRun } from '~/lib/server/services/runs';
 export const POST = endpoint(routes.runs.abandon, ({ actor, params, body }) =>
   abandonRun(actor, params.id, body.reason),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

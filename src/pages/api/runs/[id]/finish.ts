@@ -5,4 +5,4 @@ import { finishRun } from '~/lib/server/services/runs';
 export const POST = endpoint(routes.runs.finish, ({ actor, params, body }) =>
   finishRun(actor, params.id, body, new Date()),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

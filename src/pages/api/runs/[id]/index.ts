@@ -6,4 +6,4 @@ export const GET = endpoint(routes.runs.get, ({ actor, params }) => getRun(actor
 export const PATCH = endpoint(routes.runs.update, ({ actor, params, revision, body }) =>
   updateRun(actor, params.id, revision, body),
 );
-export const ALL = methodNotAllowed('GET', 'PATCH');
+export const ALL = methodNotAllowed({ GET, PATCH });

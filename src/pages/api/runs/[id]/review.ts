@@ -3,4 +3,4 @@ import { endpoint, methodNotAllowed } from '~/lib/server/http/endpoint';
 import { getReview } from '~/lib/server/services/reviews';
 
 export const GET = endpoint(routes.review.review, ({ actor, params }) => getReview(actor, params.id));
-export const ALL = methodNotAllowed('GET');
+export const ALL = methodNotAllowed({ GET });

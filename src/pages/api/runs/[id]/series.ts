@@ -5,4 +5,4 @@ import { getSeries } from '~/lib/server/services/series';
 export const GET = endpoint(routes.review.series, ({ actor, params, query }) =>
   getSeries(actor, params.id, query),
 );
-export const ALL = methodNotAllowed('GET');
+export const ALL = methodNotAllowed({ GET });

@@ -5,4 +5,4 @@ import { startRun } from '~/lib/server/services/runs';
 export const POST = endpoint(routes.runs.start, ({ actor, params, body }) =>
   startRun(actor, params.id, body, new Date()),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

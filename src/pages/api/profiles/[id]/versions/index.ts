@@ -5,4 +5,4 @@ import { createVersion } from '~/lib/server/services/versions';
 export const POST = endpoint(routes.profiles.createVersion, ({ actor, params, body }) =>
   createVersion(actor, params.id, body),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

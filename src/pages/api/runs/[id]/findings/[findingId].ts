@@ -5,4 +5,4 @@ import { decideFinding } from '~/lib/server/services/findings';
 export const PATCH = endpoint(routes.findings.update, ({ actor, params, revision, body }) =>
   decideFinding(actor, params.id, params.findingId, revision, body, new Date()),
 );
-export const ALL = methodNotAllowed('PATCH');
+export const ALL = methodNotAllowed({ PATCH });

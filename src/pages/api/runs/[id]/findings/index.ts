@@ -8,4 +8,4 @@ export const GET = endpoint(routes.findings.list, ({ actor, params, query }) =>
 export const POST = endpoint(routes.findings.create, ({ actor, params, body }) =>
   addFinding(actor, params.id, body, new Date()),
 );
-export const ALL = methodNotAllowed('GET', 'POST');
+export const ALL = methodNotAllowed({ GET, POST });

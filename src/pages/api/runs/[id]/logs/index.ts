@@ -10,4 +10,4 @@ export const POST = endpoint(routes.logs.upload, async ({ actor, params, context
   );
   return new Answer(log, created ? 201 : 200);
 });
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

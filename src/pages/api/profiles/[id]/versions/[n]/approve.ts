@@ -6,4 +6,4 @@ import { approveVersion } from '~/lib/server/services/version-review';
 export const POST = endpoint(routes.profiles.approve, ({ actor, params, body }) =>
   approveVersion(actor, params.id, versionNumber(params.n), body),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

@@ -9,4 +9,4 @@ export const GET = endpoint(routes.profiles.getVersion, ({ actor, params }) =>
 export const PUT = endpoint(routes.profiles.putVersion, ({ actor, params, revision, body }) =>
   saveDraft(actor, params.id, versionNumber(params.n), revision, body),
 );
-export const ALL = methodNotAllowed('GET', 'PUT');
+export const ALL = methodNotAllowed({ GET, PUT });

@@ -6,4 +6,4 @@ import { retireVersion } from '~/lib/server/services/version-review';
 export const POST = endpoint(routes.profiles.retire, ({ actor, params, body }) =>
   retireVersion(actor, params.id, versionNumber(params.n), body),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

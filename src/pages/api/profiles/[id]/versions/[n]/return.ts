@@ -6,4 +6,4 @@ import { returnVersion } from '~/lib/server/services/version-review';
 export const POST = endpoint(routes.profiles.return, ({ actor, params, body }) =>
   returnVersion(actor, params.id, versionNumber(params.n), body),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

@@ -6,4 +6,4 @@ import { submitVersion } from '~/lib/server/services/version-review';
 export const POST = endpoint(routes.profiles.submit, ({ actor, params, body }) =>
   submitVersion(actor, params.id, versionNumber(params.n), body),
 );
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

@@ -6,4 +6,4 @@ export const POST = endpoint(routes.logs.answer, async ({ actor, params, body })
   const { log, created } = await answerQuestions(actor, params.id, params.logId, body.mapping);
   return new Answer(log, created ? 201 : 200);
 });
-export const ALL = methodNotAllowed('POST');
+export const ALL = methodNotAllowed({ POST });

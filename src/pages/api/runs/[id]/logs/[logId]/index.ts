@@ -6,4 +6,4 @@ export const GET = endpoint(routes.logs.get, ({ actor, params }) => getLog(actor
 export const PATCH = endpoint(routes.logs.align, ({ actor, params, revision, body }) =>
   alignLog(actor, params.id, params.logId, revision, body.alignment),
 );
-export const ALL = methodNotAllowed('GET', 'PATCH');
+export const ALL = methodNotAllowed({ GET, PATCH });

@@ -17,4 +17,4 @@ export const GET: APIRoute = async ({ locals, params }) => {
     },
   });
 };
-export const ALL = methodNotAllowed('GET');
+export const ALL = methodNotAllowed({ GET });
