@@ -56,6 +56,22 @@ test('a file that can be read in two ways is kept, asked about, and read as answ
   expect(channels[0]?.firstAt).toBe('2026-04-03T08:00:00.000Z');
 });
 
+test('a file chosen before the page’s script is there is taken when it is', async () => {
+  const run = await runAt('2026-02-14T07:00:00Z');
+  const { page } = await browser.openAs('tech');
+  let letScriptsIn: () => void = () => undefined;
+  const chosen = new Promise<void>((resolve) => (letScriptsIn = resolve));
+  await page.route(/LogImport[^/]*\.js/, async (route) => {
+    await chosen;
+    await route.continue();
+  });
+  await page.goto(run.path);
+  const file = { name: 'plain.csv', mimeType: 'text/csv', buffer: dialect('d01-plain') };
+  await page.getByLabel('Log file').setInputFiles(file);
+  letScriptsIn();
+  await page.getByText(/rows read/).waitFor();
+});
+
 test('rows that cannot be read are counted and listed by their line, and the file comes back byte for byte', async () => {
   const run = await runAt('2026-02-14T07:00:00Z');
   const content = dialect('d19-repeated-header');

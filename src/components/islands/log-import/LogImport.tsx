@@ -1,5 +1,5 @@
 import { islandProps } from '~/lib/client/island-props';
-import { useId, useMemo, useRef, useState, type DragEvent } from 'react';
+import { useEffect, useId, useMemo, useRef, useState, type DragEvent } from 'react';
 import { sentenceFor } from '~/lib/client/api';
 import type { Log, LogQuestions } from '~/lib/contracts/logs';
 import type { Mapping } from '~/lib/logs/schema';
@@ -23,6 +23,7 @@ export default function LogImport(given: LogImportProps) {
   const [problem, setProblem] = useState<string | null>(null);
   const [over, setOver] = useState(false);
   const stop = useRef<AbortController | null>(null);
+  const input = useRef<HTMLInputElement>(null);
   const id = useId();
 
   const settle = (sent: Sent, mapping: Mapping): void =>
@@ -53,6 +54,16 @@ export default function LogImport(given: LogImportProps) {
       setPhase(share >= 1 ? { at: 'reading', name: file.name } : { at: 'sending', name: file.name, share });
     await sendLog(props.runId, file, onProgress, stop.current.signal).then((sent) => settle(sent, {}), fail);
   };
+  const takeChosen = (from: HTMLInputElement): void => {
+    const file = from.files?.[0];
+    from.value = '';
+    if (file) void take(file);
+  };
+  const takeEarly = useRef(takeChosen);
+  // A file may be chosen before the script is there to hear of it.
+  useEffect(() => {
+    if (input.current?.files?.length) takeEarly.current(input.current);
+  }, []);
   const answer = async (answers: Mapping): Promise<void> => {
     if (phase.at !== 'asked') return;
     const mapping = { ...phase.mapping, ...answers };
@@ -93,15 +104,12 @@ export default function LogImport(given: LogImportProps) {
             CSV or text, in whatever shape the logger writes it. The file itself is kept as it came.
           </span>
           <input
+            ref={input}
             className="log-file"
             type="file"
             accept=".csv,.txt,.tsv,.log,.dat,text/csv,text/plain"
             aria-label="Log file"
-            onChange={(event) => {
-              const file = event.target.files?.[0];
-              event.target.value = '';
-              if (file) void take(file);
-            }}
+            onChange={(event) => takeChosen(event.target)}
           />
         </label>
       ) : null}
