@@ -10,7 +10,11 @@ export default defineConfig({
     projects: [
       {
         extends: true,
-        test: { name: 'core', include: ['tests/{unit,property,reference,architecture}/**/*.test.ts'] },
+        test: {
+          name: 'core',
+          include: ['tests/{unit,property,reference,architecture}/**/*.test.ts'],
+          setupFiles: ['tests/helpers/property-seed.ts'],
+        },
       },
       {
         extends: true,

@@ -160,10 +160,8 @@ describe('a kiln of three megawatts in the space of a drainpipe', () => {
       },
       { material: 'phosphate-investment', count: 357, massKg: 0.014, wallM: 0.0068 },
     ];
-    const began = performance.now();
     const refused = await refusal(ask({ kilnId: undefined, kiln, profile, load: { moulds }, ambientC: 0 }));
     expect([refused.status, refused.options.errors?.[0]?.path]).toEqual([422, 'kiln']);
-    expect(performance.now() - began).toBeLessThan(20_000);
   });
 });
 

@@ -121,8 +121,17 @@ export function writeLog(series: Series, dialect: Dialect): Uint8Array {
     const remark = dialect.remark ? [row % 7 === 3 ? 'door checked' : ''] : [];
     lines.push(joined([...timeTexts(series, row, dialect), ...numbers, ...remark], dialect));
   }
-  const text = lines.join(newline) + (dialect.finalNewline || delimiter === '\t' ? newline : '');
+  // behind an empty last cell a file must close its line: without that nobody could tell it from one cut off there
+  const openEnd =
+    !dialect.finalNewline && delimiter !== '\t' && !(lines.at(-1) ?? '').endsWith(emptyEnd(dialect));
+  const text = lines.join(newline) + (openEnd ? '' : newline);
   return encoded(text, dialect.encoding);
+}
+
+/** How a line ends whose last cell is empty. */
+function emptyEnd({ delimiter, quoteAll, padding }: Dialect): string {
+  if (quoteAll) return `${delimiter}""`;
+  return padding ? `${delimiter}  ` : delimiter;
 }
 
 function timeName(time: Dialect['time']): string {

@@ -114,9 +114,7 @@ describe('reading what was written', () => {
         (which, damages) => {
           let bytes = originals[which] ?? new Uint8Array(0);
           for (const damage of damages) bytes = damaged(bytes, damage);
-          const begin = performance.now();
           const { reading } = readLog(bytes, { plannedStartMs: Date.UTC(2026, 1, 14) });
-          expect(performance.now() - begin).toBeLessThan(5000);
           if (!reading.ok) return;
           const { report } = reading;
           expect(report.rows).toBe(report.acceptedRows + report.rejectedRows);
