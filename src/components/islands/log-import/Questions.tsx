@@ -1,4 +1,4 @@
-import { useId, useState, type FormEvent } from 'react';
+import { useId, useState, type SubmitEvent } from 'react';
 import type { LogQuestion, Mapping } from '~/lib/logs/schema';
 
 interface QuestionsProps {
@@ -30,7 +30,7 @@ export function Questions({ questions, timeZone, onAnswer, onCancel }: Questions
       ]),
     ),
   );
-  const submit = (event: FormEvent): void => {
+  const submit = (event: SubmitEvent): void => {
     event.preventDefault();
     const given = questions.map(({ field, choices }) => {
       const text = answers[field] ?? '';

@@ -1,5 +1,5 @@
 import { useMutation } from '@tanstack/react-query';
-import { useState, type FormEvent, type ReactNode } from 'react';
+import { useState, type ReactNode, type SubmitEvent } from 'react';
 import { call, sentenceFor } from '~/lib/client/api';
 import { profileRoutes, type Version } from '~/lib/contracts/profiles';
 import type { Segment } from '~/lib/profile/schema';
@@ -23,7 +23,7 @@ function ActionForm(props: {
   readonly children: ReactNode;
 }) {
   const sending = useMutation({ mutationFn: props.send, onSuccess: props.onDone });
-  const submit = (event: FormEvent): void => {
+  const submit = (event: SubmitEvent): void => {
     event.preventDefault();
     sending.mutate();
   };
