@@ -3,6 +3,15 @@ import { ServerData } from '~/lib/client/query';
 import { UnitsProvider } from '~/lib/client/units';
 import { EditorPage } from './EditorPage';
 import './editor.css';
+import './figures.css';
+import './switches.css';
+import './typing.css';
+import './cards.css';
+import './upright.css';
+import './cautions.css';
+import './load.css';
+import './dialogs.css';
+import './conflict.css';
 import { profileEditorPropsSchema, type ProfileEditorInput } from './props';
 
 /** The profile editor as an island. Its props come from the page and are parsed here. */
