@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest';
 import { testApp } from '../helpers/app';
-import { alive, testBrowser, type Visit } from '../helpers/browser';
+import { alive, overflowPx, testBrowser, type Visit } from '../helpers/browser';
 import { editorOf, figureTexts, typeInto } from '../helpers/browser-editor';
 import { aDraft, approve, keptVersion, type Draft } from '../helpers/browser-studio';
 
@@ -171,4 +171,84 @@ test('an approved version shows its figures and takes no change; a new draft fro
   await editor.saved.waitFor();
   expect(await targetOf(draft, 2)).toBe(870);
   expect(await targetOf({ ...draft, path: draft.path.replace(/1$/, '2') }, 2)).toBe(850);
+});
+
+/** A draft of so many segments, each a step higher than the one before. */
+const aLongDraft = (segments: number) =>
+  aDraft(app, {
+    name: `Long ${segments}`,
+    profile: {
+      startC: 20,
+      segments: Array.from({ length: segments }, (_, index) => ({
+        stage: 'burnout' as const,
+        toC: 60 + index * 40,
+        rateCPerH: 150,
+        holdS: 1800,
+      })),
+    },
+  });
+
+test.each([7, 20])(
+  'while a strip of %i segments rolls, the axis of temperature stays, and the page is no wider',
+  async (segments) => {
+    const { page, editor } = await opened(await browser.openAs('tech'), await aLongDraft(segments));
+    const axis = page.locator('.strip-axis');
+    const at = async () => Math.round((await axis.boundingBox())?.x ?? NaN);
+    const before = await at();
+    const rolledPx = await page.locator('.strip-frame').evaluate((frame) => {
+      frame.scrollLeft = frame.scrollWidth;
+      return frame.scrollLeft;
+    });
+    expect(rolledPx).toBeGreaterThan(20);
+    expect(await at()).toBe(before);
+    expect(await axis.getByText('°C').count()).toBe(1);
+    expect(await overflowPx(page)).toBe(0);
+    // A corner that is beneath the axis comes out when it gets the focus.
+    await editor.corner(1).focus();
+    const corner = await editor.corner(1).boundingBox();
+    const edge = await axis.boundingBox();
+    expect(corner?.x).toBeGreaterThanOrEqual((edge?.x ?? NaN) + (edge?.width ?? NaN) - 1);
+  },
+);
+
+/** The colour that most of what is drawn on the strip has, as `r,g,b`. */
+const inkOfCurves = (page: Visit['page']) =>
+  page.locator('.strip-curves canvas').evaluate((canvas: HTMLCanvasElement) => {
+    // A copy: reading the canvas itself again and again would make the browser complain.
+    const copy = new OffscreenCanvas(canvas.width, canvas.height).getContext('2d');
+    copy?.drawImage(canvas, 0, 0);
+    const data = copy?.getImageData(0, 0, canvas.width, canvas.height).data ?? [];
+    const counts = new Map<string, number>();
+    for (let index = 0; index < data.length; index += 4) {
+      if ((data[index + 3] ?? 0) < 255) continue;
+      const colour = `${data[index]},${data[index + 1]},${data[index + 2]}`;
+      counts.set(colour, (counts.get(colour) ?? 0) + 1);
+    }
+    return [...counts].sort((a, b) => b[1] - a[1])[0]?.[0];
+  });
+
+test('the curves follow the theme at once: of the machine, of the account, and on paper', async () => {
+  const draft = await aDraft(app);
+  const { page } = await opened(await browser.openAs('tech', { colorScheme: 'light' }), draft);
+  // --ink of src/styles/tokens.css: #1a2436 by day, #ede7da by night, #000 in print.
+  const [day, night, print] = ['26,36,54', '237,231,218', '0,0,0'];
+  await expect.poll(() => inkOfCurves(page)).toBe(day);
+  await page.emulateMedia({ colorScheme: 'dark' });
+  await expect.poll(() => inkOfCurves(page)).toBe(night);
+  await page.evaluate(() => (document.documentElement.dataset['theme'] = 'light'));
+  await expect.poll(() => inkOfCurves(page)).toBe(day);
+  await page.emulateMedia({ media: 'print' });
+  await expect.poll(() => inkOfCurves(page)).toBe(print);
+});
+
+test('without scripts a profile says so, shows its figures, and offers nothing that does nothing', async () => {
+  const draft = await aDraft(app);
+  const { page } = await browser.openAs('tech', { javaScriptEnabled: false });
+  await page.goto(draft.path);
+  // Playwright does not look for words within noscript.
+  expect(await page.locator('.strip noscript .notice').innerText()).toMatch(/script, which is switched off/);
+  const table = page.getByRole('table', { name: /^Segments of the firing/ });
+  expect((await table.getByRole('row').allInnerTexts()).join('\n')).toMatch(/vitrification\s.*870\s*°C/);
+  expect((await table.boundingBox())?.height).toBeGreaterThan(60);
+  expect(await page.locator('.editor-actions button:visible, .editor-bar:visible').count()).toBe(0);
 });

@@ -8,7 +8,7 @@ import {
   type ProfileDocument,
 } from '~/components/islands/profile-strip/document';
 import { differencesOf } from '~/components/islands/profile-strip/differences';
-import { lateSegments, largestLag } from '~/components/islands/profile-strip/layers-shown';
+import { lateSegments, largestLag } from '~/components/islands/profile-strip/lateness';
 import { figureText, parseFigure, parsePercent } from '~/components/islands/profile-strip/parse-amounts';
 import { permissionsFor } from '~/components/islands/profile-strip/permissions';
 import { parseRamp } from '~/components/islands/profile-strip/shown';

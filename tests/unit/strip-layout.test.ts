@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { cardSizes, neededPx, placeCards } from '~/components/islands/strip/card-layout';
+import { reachesOf } from '~/components/islands/strip/Handle';
 import { leader, leaderDown, pathOf } from '~/components/islands/strip/leader';
 import { stripScales, valueAtTime } from '~/components/islands/strip/scales';
 import { axisTop, ruleDegrees, ruleTime } from '~/components/islands/strip/ticks';
@@ -152,5 +153,17 @@ describe('the ruling of the paper', () => {
     expect(axisTop(900)).toBe(1000);
     expect(axisTop(980)).toBe(1100);
     expect(axisTop(60)).toBe(200);
+  });
+});
+
+describe('handles of the curve', () => {
+  it('are as large as a fingertip where there is room, and where two are near neither covers the other', () => {
+    const reaches = reachesOf([
+      { x: 0, y: 0 },
+      { x: 100, y: 0 },
+      { x: 130, y: 0 },
+    ]);
+    expect(reaches).toEqual([22, 15, 15]);
+    expect(reachesOf([{ x: 5, y: 5 }])).toEqual([22]);
   });
 });

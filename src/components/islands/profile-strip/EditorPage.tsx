@@ -198,7 +198,7 @@ export function EditorPage(props: ProfileEditorProps) {
         </section>
       )}
       <div className="editor-bar">
-        <LayerSwitches shown={shown} available={availableLayers(estimate)} onToggle={toggle} />
+        <LayerSwitches shown={shown} available={availableLayers(planned, estimate)} onToggle={toggle} />
         <div className="editor-bar-right">
           {readOnly ? null : <UndoButtons {...editor} onUndo={editor.undo} onRedo={editor.redo} />}
           {startMs === null ? null : <StartPicker startMs={startMs} zone={zone} onChange={setStartMs} />}

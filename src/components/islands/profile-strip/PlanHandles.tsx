@@ -1,10 +1,10 @@
-import { Fragment, type KeyboardEvent } from 'react';
+import type { KeyboardEvent } from 'react';
 import { dragCorner, dragHoldEnd, dragTarget, setSegment } from '~/lib/profile/edit';
 import type { PlannedLeg } from '~/lib/profile/planned';
 import type { Profile } from '~/lib/profile/schema';
 import { cToF, fIntervalToC, formatTemperature, type UnitPreferences } from '~/lib/units';
 import { durationText } from '../strip/duration';
-import { Handle } from '../strip/Handle';
+import { Handle, reachesOf } from '../strip/Handle';
 import type { StripScales } from '../strip/scales';
 import { STAGE_NAMES } from './shown';
 
@@ -72,6 +72,11 @@ function nudged(
 export function PlanHandles(props: PlanHandlesProps) {
   const { scales, legs, scale } = props;
   const upright = scales.flow === 'down';
+  const ends = legs.flatMap((leg, index) => [
+    { index, end: 'ramp' as const, timeS: leg.rampEndS },
+    ...(leg.endS > leg.rampEndS ? [{ index, end: 'hold' as const, timeS: leg.endS }] : []),
+  ]);
+  const reaches = reachesOf(ends.map(({ index, timeS }) => scales.point(timeS, legs[index]?.toC ?? 0)));
   const turned: Readonly<Record<string, string>> = {
     ArrowUp: 'ArrowLeft',
     ArrowDown: 'ArrowRight',
@@ -90,42 +95,37 @@ export function PlanHandles(props: PlanHandlesProps) {
   };
   return (
     <g>
-      {legs.map((leg, index) => {
+      {ends.map(({ index, end, timeS }, place) => {
+        const leg = legs[index];
+        if (!leg) return null;
         const stage = STAGE_NAMES[props.profile.segments[index]?.stage ?? 'drying'].toLowerCase();
-        const shared = {
-          scales,
-          tempC: leg.toC,
-          valueNow: Math.round(scale === 'F' ? cToF(leg.toC) : leg.toC),
-          selected: props.selected === index,
-          onDrop: props.onDrop,
-          onFocus: () => props.onSelect(index),
-          onGrab: () => {
-            props.onSelect(index);
-            props.onGrab();
-          },
-        };
-        const target = formatTemperature(leg.toC, scale);
+        const after =
+          end === 'ramp' ? `after ${durationText(timeS)}` : `held ${durationText(timeS - leg.rampEndS)}`;
         return (
-          <Fragment key={index}>
-            <Handle
-              {...shared}
-              timeS={leg.rampEndS}
-              name={`End of the ramp of segment ${index + 1}, ${stage}`}
-              valueText={`${target} after ${durationText(leg.rampEndS)}`}
-              onMove={(to) => props.onChange(movedRampEnd(props, index, to), `${index}.ramp.drag`)}
-              onKeyDown={(event) => onKey(event, index, 'ramp')}
-            />
-            {leg.endS > leg.rampEndS ? (
-              <Handle
-                {...shared}
-                timeS={leg.endS}
-                name={`End of the hold of segment ${index + 1}, ${stage}`}
-                valueText={`${target}, held ${durationText(leg.endS - leg.rampEndS)}`}
-                onMove={(to) => props.onChange(movedHoldEnd(props, index, leg, to), `${index}.hold.drag`)}
-                onKeyDown={(event) => onKey(event, index, 'hold')}
-              />
-            ) : null}
-          </Fragment>
+          <Handle
+            key={`${index} ${end}`}
+            scales={scales}
+            timeS={timeS}
+            tempC={leg.toC}
+            reachPx={reaches[place] ?? 0}
+            name={`End of the ${end} of segment ${index + 1}, ${stage}`}
+            valueNow={Math.round(scale === 'F' ? cToF(leg.toC) : leg.toC)}
+            valueText={`${formatTemperature(leg.toC, scale)}${end === 'ramp' ? ' ' : ', '}${after}`}
+            selected={props.selected === index}
+            onFocus={() => props.onSelect(index)}
+            onGrab={() => {
+              props.onSelect(index);
+              props.onGrab();
+            }}
+            onMove={(to) =>
+              props.onChange(
+                end === 'ramp' ? movedRampEnd(props, index, to) : movedHoldEnd(props, index, leg, to),
+                `${index}.${end}.drag`,
+              )
+            }
+            onDrop={props.onDrop}
+            onKeyDown={(event) => onKey(event, index, end)}
+          />
         );
       })}
     </g>

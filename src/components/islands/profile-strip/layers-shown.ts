@@ -1,95 +1,191 @@
 import type { PlannedCurve } from '~/lib/profile/planned';
 import type { Estimate } from '~/lib/thermal/estimate-schema';
 import { formatNumber, THIN_SPACE } from '~/lib/units';
-import type { StripLayer } from '../strip/layers';
+import type { LayerKind, StripLayer } from '../strip/layers';
 
-/** What can be laid on the editor's strip, in the order of the switches. */
-export const LAYERS = [
-  { id: 'kiln', name: 'what the kiln will do', mark: 'solid' },
-  { id: 'plan', name: 'plan', mark: 'dashed' },
-  { id: 'core', name: 'mould core', mark: 'dotted' },
-  { id: 'pattern', name: 'pattern left', mark: 'hatched' },
-  { id: 'water', name: 'water', mark: 'aside-1' },
-  { id: 'gas', name: 'gas given off', mark: 'aside-2' },
-  { id: 'power', name: 'power', mark: 'aside-3' },
-  { id: 'heat-work', name: 'heat work', mark: 'aside-4' },
-] as const;
-export type LayerId = (typeof LAYERS)[number]['id'];
+type Curve = Estimate['curve'];
 
-export const FIRST_SHOWN: readonly LayerId[] = ['kiln', 'plan', 'core', 'pattern'];
+/** °C over run time; null where the load gives nothing to show. */
+interface DrawnCurve {
+  readonly as: 'curve';
+  readonly kind: LayerKind;
+  readonly read: (
+    planned: PlannedCurve,
+    estimate: Estimate | null,
+  ) => Pick<StripLayer, 'timeS' | 'value'> | null;
+}
 
-interface Aside {
-  readonly id: LayerId;
+/** A quantity of its own along the foot of the strip, as a share of its highest value; nothing above 0 is not shown. */
+interface DrawnAside {
+  readonly as: 'aside';
   readonly unit: string;
   readonly digits: number;
   readonly dash: readonly number[];
-  readonly values: (curve: Estimate['curve']) => readonly number[];
+  readonly read: (curve: Curve) => readonly number[];
+  /** Means nothing without a mould. */
+  readonly ofMould?: boolean;
 }
 
-const ASIDES: readonly Aside[] = [
-  { id: 'water', unit: 'kg', digits: 2, dash: [10, 3, 2, 3], values: (curve) => curve.waterLeftKg },
-  { id: 'gas', unit: 'g/min', digits: 1, dash: [5, 2], values: (curve) => curve.gasGPerMin },
-  { id: 'power', unit: 'kW', digits: 1, dash: [], values: (curve) => curve.powerKW },
-  { id: 'heat-work', unit: 'h', digits: 2, dash: [3, 3, 9, 3], values: (curve) => curve.heatWorkH },
-];
-
-/** Which layers the estimate has anything to show for. */
-export function availableLayers(estimate: Estimate | null): ReadonlySet<LayerId> {
-  const found = new Set<LayerId>(['plan']);
-  if (!estimate) return found;
-  const { curve } = estimate;
-  found.add('kiln').add('power');
-  if (estimate.mould === null) return found;
-  found.add('core').add('heat-work');
-  if (curve.patternLeftShare.some((share) => share > 0)) found.add('pattern').add('gas');
-  if (curve.waterLeftKg.some((massKg) => massKg > 0)) found.add('water');
-  return found;
+/** A share from 0 to 1 as a hatched area from the foot of the strip; nothing above 0 is not shown. */
+interface DrawnHatch {
+  readonly as: 'hatch';
+  readonly read: (curve: Curve) => readonly number[];
 }
 
-function asideLayer(aside: Aside, curve: Estimate['curve'], name: string): StripLayer[] {
-  const values = aside.values(curve);
-  const most = values.reduce((highest, value) => Math.max(highest, value), 0);
-  if (!(most > 0)) return [];
-  return [
-    {
-      id: aside.id,
-      name,
-      kind: 'aside',
-      timeS: curve.timeS,
-      value: values.map((value) => value / most),
-      full: { value: most, unit: aside.unit, digits: aside.digits },
-      dash: aside.dash,
+interface LayerEntry {
+  readonly id: string;
+  /** On its switch. */
+  readonly name: string;
+  /** In the readout, where that is shorter. */
+  readonly short?: string;
+  /** Shown before anybody has switched anything. */
+  readonly atFirst: boolean;
+  readonly drawn: DrawnCurve | DrawnAside | DrawnHatch;
+}
+
+/** All that can be laid on the editor's strip, in the order of the switches. One entry is one layer: nothing else knows them. */
+export const LAYERS = [
+  {
+    id: 'kiln',
+    name: 'what the kiln will do',
+    short: 'kiln',
+    atFirst: true,
+    drawn: {
+      as: 'curve',
+      kind: 'predicted',
+      read: (_planned, estimate) =>
+        estimate && { timeS: estimate.curve.timeS, value: estimate.curve.chamberC },
     },
-  ];
+  },
+  {
+    id: 'plan',
+    name: 'plan',
+    atFirst: true,
+    drawn: {
+      as: 'curve',
+      kind: 'planned',
+      read: ({ timeS, valueC }) => ({ timeS, value: valueC }),
+    },
+  },
+  {
+    id: 'core',
+    name: 'mould core',
+    atFirst: true,
+    drawn: {
+      as: 'curve',
+      kind: 'core',
+      read: (_planned, estimate) =>
+        estimate && estimate.mould !== null
+          ? { timeS: estimate.curve.timeS, value: estimate.curve.mouldCoreC }
+          : null,
+    },
+  },
+  {
+    id: 'pattern',
+    name: 'pattern left',
+    atFirst: true,
+    drawn: { as: 'hatch', read: (curve) => curve.patternLeftShare },
+  },
+  {
+    id: 'water',
+    name: 'water',
+    atFirst: false,
+    drawn: { as: 'aside', unit: 'kg', digits: 2, dash: [10, 3, 2, 3], read: (curve) => curve.waterLeftKg },
+  },
+  {
+    id: 'gas',
+    name: 'gas given off',
+    atFirst: false,
+    drawn: { as: 'aside', unit: 'g/min', digits: 1, dash: [5, 2], read: (curve) => curve.gasGPerMin },
+  },
+  {
+    id: 'power',
+    name: 'power',
+    atFirst: false,
+    drawn: { as: 'aside', unit: 'kW', digits: 1, dash: [], read: (curve) => curve.powerKW },
+  },
+  {
+    id: 'heat-work',
+    name: 'heat work',
+    atFirst: false,
+    drawn: {
+      as: 'aside',
+      unit: 'h',
+      digits: 2,
+      dash: [3, 3, 9, 3],
+      read: (curve) => curve.heatWorkH,
+      ofMould: true,
+    },
+  },
+] as const satisfies readonly LayerEntry[];
+export type LayerId = (typeof LAYERS)[number]['id'];
+
+export const FIRST_SHOWN: readonly LayerId[] = LAYERS.filter((layer) => layer.atFirst).map(({ id }) => id);
+
+const entries: readonly (LayerEntry & { readonly id: LayerId })[] = LAYERS;
+
+/** The layer as a curve, or nothing where there is nothing to show or it is not drawn as one. */
+function curveOf(
+  { id, name, short = name, drawn }: LayerEntry,
+  planned: PlannedCurve,
+  estimate: Estimate | null,
+): StripLayer | null {
+  if (drawn.as === 'hatch') return null;
+  if (drawn.as === 'curve') {
+    const found = drawn.read(planned, estimate);
+    return found && { id, name: short, kind: drawn.kind, ...found };
+  }
+  if (!estimate || (drawn.ofMould && estimate.mould === null)) return null;
+  const values = drawn.read(estimate.curve);
+  const most = values.reduce((highest, value) => Math.max(highest, value), 0);
+  if (!(most > 0)) return null;
+  const { unit, digits, dash } = drawn;
+  const value = values.map((each) => each / most);
+  return {
+    id,
+    name: short,
+    kind: 'aside',
+    timeS: estimate.curve.timeS,
+    value,
+    full: { value: most, unit, digits },
+    dash,
+  };
 }
 
-/** The curves to draw: plan beneath, what the kiln does over it, then the core and the asides. */
+/** What is hatched: shares over run time. */
+function hatchOf({ id, name, drawn }: LayerEntry, estimate: Estimate | null) {
+  if (drawn.as !== 'hatch' || !estimate) return null;
+  const share = drawn.read(estimate.curve);
+  return share.some((each) => each > 0) ? { id, name, timeS: estimate.curve.timeS, share } : null;
+}
+
+/** Which layers there is anything to show for. */
+export const availableLayers = (planned: PlannedCurve, estimate: Estimate | null): ReadonlySet<LayerId> =>
+  new Set(
+    entries
+      .filter((entry) => curveOf(entry, planned, estimate) ?? hatchOf(entry, estimate))
+      .map(({ id }) => id),
+  );
+
+/** The curves to draw, the plan beneath the others. Without an estimate the plan is all there is. */
 export function layersOf(
   planned: PlannedCurve,
   estimate: Estimate | null,
   shown: ReadonlySet<LayerId>,
 ): StripLayer[] {
-  const layers: StripLayer[] = [];
-  if (shown.has('plan') || !estimate)
-    layers.push({ id: 'plan', name: 'plan', kind: 'planned', timeS: planned.timeS, value: planned.valueC });
-  if (!estimate) return layers;
-  const { curve } = estimate;
-  if (shown.has('kiln'))
-    layers.push({ id: 'kiln', name: 'kiln', kind: 'predicted', timeS: curve.timeS, value: curve.chamberC });
-  if (shown.has('core') && estimate.mould !== null)
-    layers.push({
-      id: 'core',
-      name: 'mould core',
-      kind: 'core',
-      timeS: curve.timeS,
-      value: curve.mouldCoreC,
-    });
-  for (const aside of ASIDES) {
-    const name = LAYERS.find((layer) => layer.id === aside.id)?.name ?? aside.id;
-    if (shown.has(aside.id)) layers.push(...asideLayer(aside, curve, name));
-  }
-  return layers;
+  const isShown = (id: string): boolean => entries.some((entry) => entry.id === id && shown.has(entry.id));
+  const found = entries
+    .flatMap((entry) => curveOf(entry, planned, estimate) ?? [])
+    .filter(({ id, kind }) => isShown(id) || (kind === 'planned' && !estimate));
+  return [
+    ...found.filter(({ kind }) => kind === 'planned'),
+    ...found.filter(({ kind }) => kind !== 'planned'),
+  ];
 }
+
+/** The areas to hatch. */
+export const hatchesOf = (estimate: Estimate | null, shown: ReadonlySet<LayerId>) =>
+  entries.filter(({ id }) => shown.has(id)).flatMap((entry) => hatchOf(entry, estimate) ?? []);
 
 /** Where an aside is highest, with what it is there, so that its scale can be read off the strip. */
 export function asidePeaks(layers: readonly StripLayer[]): { id: string; atS: number; text: string }[] {
@@ -104,36 +200,5 @@ export function asidePeaks(layers: readonly StripLayer[]): { id: string; atS: nu
         text: `${layer.name} ${formatNumber(value, digits)}${THIN_SPACE}${unit}`,
       },
     ];
-  });
-}
-
-/** Where the mould core trails the chamber most while the kiln heats: the moment and by how much; null below 5 °C. */
-export function largestLag(estimate: Estimate | null): { atS: number; coreC: number; lagC: number } | null {
-  if (!estimate || estimate.mould === null) return null;
-  const { timeS, chamberC, mouldCoreC } = estimate.curve;
-  let best: { atS: number; coreC: number; lagC: number } | null = null;
-  timeS.forEach((atS, index) => {
-    const coreC = mouldCoreC[index] ?? 0;
-    const lagC = (chamberC[index] ?? 0) - coreC;
-    if (lagC >= 5 && atS <= estimate.predictedS && (best === null || lagC > best.lagC))
-      best = { atS, coreC, lagC };
-  });
-  return best;
-}
-
-/** Segments whose arrival the kiln is late for by five minutes or more, as it stands after the segments before. */
-export function lateSegments(
-  planned: PlannedCurve,
-  estimate: Estimate | null,
-): { index: number; plannedS: number; realS: number; behindS: number; targetC: number }[] {
-  if (!estimate) return [];
-  return planned.legs.flatMap((leg, index) => {
-    const timed = estimate.segments[index];
-    if (!timed || !timed.kilnLimited) return [];
-    const behindS = timed.rampEndS - leg.rampEndS;
-    const before =
-      index === 0 ? 0 : (estimate.segments[index - 1]?.endS ?? 0) - (planned.legs[index - 1]?.endS ?? 0);
-    if (behindS - before < 300) return [];
-    return [{ index, plannedS: leg.rampEndS, realS: timed.rampEndS, behindS, targetC: leg.toC }];
   });
 }

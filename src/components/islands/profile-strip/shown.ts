@@ -1,4 +1,4 @@
-import type { Rate, Segment, Stage } from '~/lib/profile/schema';
+import type { Rate, Segment } from '~/lib/profile/schema';
 import {
   cIntervalToF,
   cToF,
@@ -10,14 +10,7 @@ import {
 } from '~/lib/units';
 import { PROFILE_LIMITS } from '~/lib/profile/schema';
 
-export const STAGE_NAMES: Readonly<Record<Stage, string>> = {
-  drying: 'Drying',
-  'melt-out': 'Melt-out',
-  burnout: 'Burnout',
-  vitrification: 'Vitrification',
-  'casting-hold': 'Casting hold',
-  cooling: 'Cooling',
-};
+export { STAGE_NAMES } from '~/components/words/names';
 
 export const STATE_NAMES = {
   draft: 'draft',

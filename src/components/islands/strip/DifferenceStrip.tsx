@@ -61,25 +61,27 @@ export function DifferenceStrip(props: DifferenceStripProps) {
   const clip = `strip-difference-${Math.round(leftPx)}-${Math.round(widthPx)}`;
   const labels = [2 * bandC, 0, -2 * bandC];
   return (
-    <svg className="strip-difference" width={leftPx + widthPx + 10} height={heightPx} aria-hidden="true">
-      <clipPath id={clip}>
-        <rect x={leftPx} y="0" width={widthPx} height={heightPx} />
-      </clipPath>
-      <rect className="strip-sheet" x={leftPx} y="0" width={widthPx} height={heightPx} />
-      <rect
-        className="strip-band"
-        x={leftPx}
-        y={scales.tempPx(bandC)}
-        width={widthPx}
-        height={scales.tempPx(-bandC) - scales.tempPx(bandC)}
-      />
-      <path
-        className="strip-coarse"
-        d={time.coarse.map((timeS) => `M${Math.round(scales.timePx(timeS)) + 0.5} 0v${heightPx}`).join('')}
-      />
-      <path className="strip-zero" d={`M${leftPx} ${scales.tempPx(0)}h${widthPx}`} />
-      <path className="strip-difference-line" d={path} clipPath={`url(#${clip})`} />
-      <g className="strip-numbers">
+    <div className="strip-difference" aria-hidden="true">
+      <svg className="strip-layer" width={leftPx + widthPx + 10} height={heightPx}>
+        <clipPath id={clip}>
+          <rect x={leftPx} y="0" width={widthPx} height={heightPx} />
+        </clipPath>
+        <rect className="strip-sheet" x={leftPx} y="0" width={widthPx} height={heightPx} />
+        <rect
+          className="strip-band"
+          x={leftPx}
+          y={scales.tempPx(bandC)}
+          width={widthPx}
+          height={scales.tempPx(-bandC) - scales.tempPx(bandC)}
+        />
+        <path
+          className="strip-coarse"
+          d={time.coarse.map((timeS) => `M${Math.round(scales.timePx(timeS)) + 0.5} 0v${heightPx}`).join('')}
+        />
+        <path className="strip-zero" d={`M${leftPx} ${scales.tempPx(0)}h${widthPx}`} />
+        <path className="strip-difference-line" d={path} clipPath={`url(#${clip})`} />
+      </svg>
+      <svg className="strip-axis strip-numbers" width={leftPx - 2} height={heightPx}>
         {labels.map((value) => {
           const degrees = temperature === 'F' ? cIntervalToF(value) : value;
           return (
@@ -88,7 +90,7 @@ export function DifferenceStrip(props: DifferenceStripProps) {
             </text>
           );
         })}
-      </g>
-    </svg>
+      </svg>
+    </div>
   );
 }

@@ -1,5 +1,5 @@
 import { useRef, type KeyboardEvent, type PointerEvent } from 'react';
-import type { StripScales } from './scales';
+import type { Point, StripScales } from './scales';
 
 export interface HandleProps {
   readonly scales: StripScales;
@@ -11,6 +11,8 @@ export interface HandleProps {
   /** In degrees as shown, for assistive technology. */
   readonly valueNow: number;
   readonly selected: boolean;
+  /** Half the side of what can be touched, px. */
+  readonly reachPx: number;
   readonly onGrab: () => void;
   readonly onMove: (to: { timeS: number; tempC: number; fine: boolean }) => void;
   readonly onDrop: () => void;
@@ -18,8 +20,16 @@ export interface HandleProps {
   readonly onFocus: () => void;
 }
 
-/** Half the side of what can be touched, px. */
-const TOUCH_PX = 20;
+/** Half a fingertip, and the least that is left of it, px (WCAG 2.2, success criterion 2.5.8). */
+const FINGER_PX = { most: 22, least: 12 };
+
+/** How far each handle reaches: half a fingertip, and where two are near, to half way between them. */
+export const reachesOf = (places: readonly Point[]): number[] =>
+  places.map(({ x, y }, index) => {
+    const others = places.filter((_, other) => other !== index);
+    const nearest = Math.min(Infinity, ...others.map((other) => Math.hypot(other.x - x, other.y - y)));
+    return Math.max(FINGER_PX.least, Math.min(FINGER_PX.most, nearest / 2));
+  });
 
 /** A corner of the plan that can be taken hold of, by pointer, finger or keys. */
 export function Handle(props: HandleProps) {
@@ -68,7 +78,7 @@ export function Handle(props: HandleProps) {
       onPointerUp={drop}
       onPointerCancel={drop}
     >
-      <circle className="strip-handle-reach" cx={x} cy={y} r={TOUCH_PX} />
+      <circle className="strip-handle-reach" cx={x} cy={y} r={props.reachPx} />
       <rect
         className="strip-handle-mark"
         x={x - 5.5}

@@ -115,14 +115,18 @@ function TimeLabels({
   time,
   startMs,
   zone,
-}: Omit<PaperProps, 'temperature' | 'axis'> & { time: Ruling }) {
+  axis,
+}: Omit<PaperProps, 'temperature'> & { time: Ruling }) {
   const { box, flow, view } = scales;
   const across = flow === 'across';
-  // A label at the very end would be cut off in its middle.
-  const inside = (px: number) =>
-    px + 22 > box.leftPx + box.widthPx + 10
-      ? ({ x: box.leftPx + box.widthPx + 8, textAnchor: 'end' } as const)
+  // A label at the very end would be cut off in its middle, one at the beginning would stand beneath the axis.
+  const inside = (px: number) => {
+    if (px + 22 > box.leftPx + box.widthPx + 10)
+      return { x: box.leftPx + box.widthPx + 8, textAnchor: 'end' } as const;
+    return axis === false && px - 20 < box.leftPx
+      ? ({ x: box.leftPx + 2, textAnchor: 'start' } as const)
       : ({ x: px, textAnchor: 'middle' } as const);
+  };
   const clock = useMemo(
     () =>
       startMs === null
@@ -195,7 +199,7 @@ export function Paper({ scales, temperature, startMs, zone, axis = true }: Paper
       <Lines scales={scales} time={time.fine} heatC={inC(heat.fine)} className="strip-fine" />
       <Lines scales={scales} time={time.coarse} heatC={inC(heat.coarse)} className="strip-coarse" />
       {axis ? <Axis scales={scales} temperature={temperature} /> : null}
-      <TimeLabels scales={scales} time={time} startMs={startMs} zone={zone} />
+      <TimeLabels scales={scales} time={time} startMs={startMs} zone={zone} axis={axis} />
     </g>
   );
 }

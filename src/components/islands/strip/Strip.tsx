@@ -6,6 +6,7 @@ import { Readout } from './Readout';
 import { stripScales, type Flow, type StripScales, type StripView } from './scales';
 import { StripTable, type StripTableContent } from './StripTable';
 import './strip.css';
+import './touch.css';
 import { useSize } from './useSize';
 
 /** Narrower than this the strip stands upright. */
@@ -35,11 +36,9 @@ export interface StripProps {
   /** Overlays under the curves (hatching, marks), over them (handles, brackets), and beneath or beside (cards). */
   readonly under?: (scales: StripScales) => ReactNode;
   readonly over?: (scales: StripScales) => ReactNode;
-  readonly beside?: (scales: StripScales) => ReactNode;
+  readonly beside?: (scales: StripScales, roomPx: number) => ReactNode;
   /** Shows moment and values under the pointer. */
   readonly readout?: boolean;
-  /** What stands here before the room is known (on the server). */
-  readonly skeleton?: ReactNode;
 }
 
 const MARGIN = { leftPx: 68, rightPx: 10, topPx: 30, bottomPx: 30 };
@@ -104,7 +103,7 @@ function StripBody(props: StripProps & { readonly widthPx: number }) {
           </svg>
         ) : null}
       </div>
-      {props.beside?.(scales)}
+      {props.beside?.(scales, widthPx)}
     </div>
   );
 }
@@ -123,7 +122,15 @@ export function Strip(props: StripProps) {
         {props.summary}
       </figcaption>
       <div ref={frame} className="strip-frame">
-        {size === null ? props.skeleton : <StripBody {...props} widthPx={size.widthPx} />}
+        {size === null ? (
+          <noscript>
+            <p className="notice">
+              The strip is drawn by a script, which is switched off in this browser. Its figures stand below.
+            </p>
+          </noscript>
+        ) : (
+          <StripBody {...props} widthPx={size.widthPx} />
+        )}
       </div>
       <StripTable content={props.table} />
     </figure>

@@ -38,5 +38,5 @@ const PENS: Readonly<Record<LayerKind, Pen>> = {
   aside: { widthPx: 1.25, dash: [8, 3, 2, 3], ink: 'ink-2' },
 };
 
-export const penOf = (layer: StripLayer): Pen =>
+export const penOf = (layer: Pick<StripLayer, 'kind' | 'dash'>): Pen =>
   layer.dash ? { ...PENS[layer.kind], dash: layer.dash } : PENS[layer.kind];
