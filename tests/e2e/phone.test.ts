@@ -11,6 +11,23 @@ const app = await testApp();
 const browser = testBrowser(app);
 const POCKET = { viewport: PHONE, hasTouch: true, isMobile: true, deviceScaleFactor: 2 } as const;
 
+/** Sides of a fingertip, px, which what is pressed on the strip's pages has; links within a sentence keep its line. */
+const FINGER_PX = 44;
+const PRESSED = ':is(.btn, .chip, .undo-button, .segment-summary, select, input.input, .start-picker .link)';
+
+/** What is pressed in the editor and the review and is smaller than a fingertip, each with its size. */
+const underFinger = (page: Page, where: string): Promise<string[]> =>
+  page.locator(`:is(.editor, .run-review, .log-import) ${PRESSED}:visible`).evaluateAll(
+    (controls, { least, where }) =>
+      controls.flatMap((control) => {
+        const { width, height } = control.getBoundingClientRect();
+        if (width >= least - 0.5 && height >= least - 0.5) return [];
+        const name = control.getAttribute('aria-label') ?? control.textContent ?? '';
+        return [`${where}: ${name} ${width.toFixed(1)} × ${height.toFixed(1)} px`];
+      }),
+    { least: FINGER_PX, where },
+  );
+
 /** Looks at the page as it stands: nothing wider than the screen, nothing too small for a finger. */
 async function faultsOf(page: Page, where: string): Promise<string[]> {
   const sideways = await overflowPx(page);
@@ -52,11 +69,13 @@ test('on a phone a card of the upright strip is tapped, changed and kept', async
   await card.waitFor();
   await expectUpright(page);
   found.push(...(await faultsOf(page, 'editor')));
+  found.push(...(await underFinger(page, 'editor')));
 
   await card.tap();
   const sheet = page.getByRole('dialog', { name: /Vitrification/ });
   await sheet.waitFor();
   found.push(...(await faultsOf(page, 'sheet of a segment')));
+  found.push(...(await underFinger(page, 'sheet of a segment')));
   await editor.field('Target', 2).fill('845');
   await editor.field('Target', 2).press('Enter');
   await sheet.getByLabel('attended').tap();
@@ -68,6 +87,7 @@ test('on a phone a card of the upright strip is tapped, changed and kept', async
   await page.getByRole('button', { name: /^2 shells/ }).tap();
   await page.getByRole('region', { name: 'Load', exact: true }).waitFor();
   found.push(...(await faultsOf(page, 'load')));
+  found.push(...(await underFinger(page, 'load')));
   expect(found).toEqual([]);
 });
 
@@ -103,6 +123,7 @@ test('on a phone a log is given to a run and its overshoot is confirmed', async 
   const card = page.getByRole('button', { name: /^Overshoot/ });
   await card.tap();
   found.push(...(await faultsOf(page, 'review')));
+  found.push(...(await underFinger(page, 'review')));
   const panel = page.getByRole('region', { name: /^Overshoot/ });
   await panel.getByLabel('Remark').fill('Cups glazed at the lip.');
   await panel.getByRole('button', { name: 'Confirm', exact: true }).tap();

@@ -5,6 +5,7 @@ import type { Log, LogQuestions } from '~/lib/contracts/logs';
 import type { Mapping } from '~/lib/logs/schema';
 import { ImportReportView } from './ImportReportView';
 import './log-import.css';
+import '../strip/touch.css';
 import { logImportPropsSchema, type LogImportProps } from './props';
 import { Questions } from './Questions';
 import { sendAnswers, sendLog, type Sent } from './send-log';
@@ -88,6 +89,11 @@ export default function LogImport(given: LogImportProps) {
       <h2 id={`${id}-title`} className="section-title">
         {props.again ? 'Add another log' : 'Thermocouple log'}
       </h2>
+      <noscript>
+        <p className="notice">
+          A log is sent and read step by step by a script, which is switched off in this browser.
+        </p>
+      </noscript>
       {phase.at === 'waiting' ? (
         <label
           className="log-drop"

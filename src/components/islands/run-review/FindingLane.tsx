@@ -2,15 +2,20 @@ import type { Finding, Series } from '~/lib/contracts/runs';
 import { placeCards } from '../strip/card-layout';
 import { leader, leaderDown, pathOf } from '../strip/leader';
 import type { StripScales } from '../strip/scales';
+import type { TimeWindow } from '../strip/window';
 import { FindingCard, type FindingCardProps } from './FindingCard';
 import { anchorOf } from './view';
 
-const CARD = { widthPx: 196, gapPx: 10, heightPx: 104 };
+const CARD = { widthPx: 196, gapPx: 10, heightPx: 128 };
 const LEADER_PX = 34;
 
 /** Length of strip that the cards of so many findings need. */
 export const findingsNeedPx = (count: number, flow: 'across' | 'down'): number =>
   flow === 'across' ? count * (CARD.widthPx + CARD.gapPx) : count * (CARD.heightPx + CARD.gapPx);
+
+/** The findings that reach into a stretch of time. */
+export const findingsWithin = (findings: readonly Finding[], { fromS, toS }: TimeWindow): Finding[] =>
+  findings.filter((finding) => finding.endS >= fromS && finding.startS <= toS);
 
 interface FindingLaneProps {
   readonly scales: StripScales;
@@ -22,9 +27,7 @@ interface FindingLaneProps {
 
 /** The findings as cards in order of time, each hanging from its moment of the measured curve. */
 export function FindingLane({ scales, findings, control, selected, cardOf }: FindingLaneProps) {
-  const shown = findings.filter(
-    (finding) => finding.endS >= scales.view.fromS && finding.startS <= scales.view.toS,
-  );
+  const shown = findingsWithin(findings, scales.view);
   if (shown.length === 0) return null;
   const down = scales.flow === 'down';
   const middles = shown.map((finding) => scales.timePx(anchorOf(finding, control).timeS));

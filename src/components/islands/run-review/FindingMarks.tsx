@@ -1,6 +1,7 @@
 import type { Finding } from '~/lib/contracts/runs';
 import { FINDING_TITLES } from '~/lib/review/words';
 import type { StripScales } from '../strip/scales';
+import { findingsWithin } from './FindingLane';
 
 interface FindingMarksProps {
   readonly scales: StripScales;
@@ -14,11 +15,8 @@ export function FindingMarks({ scales, findings, selected, onSelect }: FindingMa
   const { box, view } = scales;
   return (
     <g>
-      {findings
-        .filter(
-          (finding) =>
-            finding.endS >= view.fromS && finding.startS <= view.toS && finding.state !== 'dismissed',
-        )
+      {findingsWithin(findings, view)
+        .filter(({ state }) => state !== 'dismissed')
         .map((finding) => {
           const from = Math.max(scales.timePx(view.fromS), scales.timePx(finding.startS));
           const to = Math.max(from + 3, Math.min(scales.timePx(view.toS), scales.timePx(finding.endS)));

@@ -92,9 +92,10 @@ export function FindingPanel(props: FindingPanelProps) {
           </label>
           <label className="label" htmlFor={`${id}-follow`}>
             What follows
-            <input
+            <textarea
               id={`${id}-follow`}
               className="input"
+              rows={2}
               maxLength={2000}
               value={followUp}
               onChange={(event) => setFollowUp(event.target.value)}

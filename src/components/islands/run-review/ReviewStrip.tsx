@@ -1,25 +1,19 @@
-import { useMemo, useRef, useState, type KeyboardEvent, type WheelEvent } from 'react';
+import { useEffect, useMemo, useRef, useState, type KeyboardEvent, type RefObject } from 'react';
 import type { Finding } from '~/lib/contracts/runs';
 import { FINDING_TITLES } from '~/lib/review/words';
 import { useUnits } from '~/lib/client/units';
 import { formatTemperature } from '~/lib/units';
-import { clockTime } from '../strip/clock';
-import { DifferenceStrip } from '../strip/DifferenceStrip';
-import { durationText } from '../strip/duration';
-import { Overview } from '../strip/Overview';
-import type { StripScales } from '../strip/scales';
 import { Strip } from '../strip/Strip';
-import { useTimeSelection } from '../strip/useTimeSelection';
 import type { TimeWindowControl } from '../strip/useTimeWindow';
 import type { TimeWindow } from '../strip/window';
+import { Beneath } from './Beneath';
 import { spanText } from './FindingCard';
-import { FindingLane, findingsNeedPx } from './FindingLane';
-import { FindingMarks } from './FindingMarks';
+import { FindingLane, findingsNeedPx, findingsWithin } from './FindingLane';
+import { MarkGround } from './MarkGround';
 import type { RunReviewProps } from './props';
+import { ReviewBar } from './ReviewBar';
 import { controlOf, differenceOf, layersOf, viewOf } from './view';
 import { useSeries } from './use-review';
-
-const BAND_C = 10;
 
 interface ReviewStripProps extends RunReviewProps {
   readonly window: TimeWindowControl;
@@ -35,7 +29,7 @@ interface ReviewStripProps extends RunReviewProps {
 export function ReviewStrip(props: ReviewStripProps) {
   const { window: zoom, shownFindings, selected } = props;
   const { temperature } = useUnits();
-  const { series, loading } = useSeries(props, zoom.shown, zoom.isZoomed);
+  const { series, loading, failed } = useSeries(props, zoom.shown, zoom.isZoomed);
   const [hidden, setHidden] = useState<ReadonlySet<string>>(
     new Set(['carried', ...props.series.channels.filter((one) => one.unit !== 'C').map((one) => one.id)]),
   );
@@ -69,48 +63,19 @@ export function ReviewStrip(props: ReviewStripProps) {
     }
     event.preventDefault();
   };
-  const onWheel = (event: WheelEvent<HTMLDivElement>): void => {
-    if (!event.ctrlKey) return;
-    zoom.zoom(event.deltaY < 0 ? 1.25 : 0.8);
-  };
-  const summary = `Run ${props.run.number}: ${props.review.verdict}. ${shownFindings.length} findings.`;
+  useWheelZoom(group, zoom);
+  const standing = loading ? 'Reading' : failed ? 'It could not be read closer, and is shown as it was.' : '';
+  const summary = `Run ${props.run.number}: ${props.review.verdict.replace(/\.*$/, '.')} ${shownFindings.length} ${shownFindings.length === 1 ? 'finding' : 'findings'}.`;
   return (
     <div>
-      <div className="review-bar">
-        <div className="review-layers" role="group" aria-label="Curves shown">
-          {every.map((layer) => (
-            <button
-              key={layer.id}
-              type="button"
-              className="chip"
-              aria-pressed={!hidden.has(layer.id)}
-              onClick={() => setHidden((before) => toggled(before, layer.id))}
-            >
-              {layer.name}
-            </button>
-          ))}
-        </div>
-        <div className="review-zoom" role="group" aria-label="Zoom">
-          <button type="button" className="btn btn-small" onClick={() => zoom.zoom(1.6)} aria-label="Closer">
-            +
-          </button>
-          <button
-            type="button"
-            className="btn btn-small"
-            onClick={() => zoom.zoom(1 / 1.6)}
-            disabled={!zoom.isZoomed}
-            aria-label="Further"
-          >
-            −
-          </button>
-          <button type="button" className="btn btn-small" onClick={zoom.reset} disabled={!zoom.isZoomed}>
-            Whole firing
-          </button>
-          <span className="hint" role="status">
-            {loading ? 'Reading' : ''}
-          </span>
-        </div>
-      </div>
+      <ReviewBar
+        layers={every}
+        hidden={hidden}
+        onToggle={(id) => setHidden((before) => toggled(before, id))}
+        zoom={zoom}
+        onMark={props.mayDecide ? props.onMark : null}
+        standing={standing}
+      />
       <div
         ref={group}
         className="review-strip"
@@ -120,7 +85,6 @@ export function ReviewStrip(props: ReviewStripProps) {
         aria-describedby="review-keys"
         data-testid="review-strip"
         onKeyDown={onKeyDown}
-        onWheel={onWheel}
       >
         <Strip
           view={view}
@@ -130,10 +94,10 @@ export function ReviewStrip(props: ReviewStripProps) {
           layers={layers}
           summary={summary}
           table={findingsTable(shownFindings, startMs, zone, temperature, props)}
-          neededPx={({ flow }) => findingsNeedPx(shownFindings.length, flow)}
+          neededPx={({ flow }) => findingsNeedPx(findingsWithin(shownFindings, view).length, flow)}
           readout={false}
           over={(scales) => (
-            <Overlay
+            <MarkGround
               scales={scales}
               selected={selected}
               findings={shownFindings}
@@ -141,7 +105,7 @@ export function ReviewStrip(props: ReviewStripProps) {
               onMark={props.mayDecide ? props.onMark : null}
             />
           )}
-          beside={(scales) => (
+          beside={(scales, roomPx) => (
             <>
               <FindingLane
                 scales={scales}
@@ -156,17 +120,16 @@ export function ReviewStrip(props: ReviewStripProps) {
                   onSelect: () => props.onSelect(finding.id === selected?.id ? null : finding.id),
                 })}
               />
-              {scales.flow === 'across' ? (
-                <Beneath
-                  scales={scales}
-                  zoom={zoom}
-                  layers={every}
-                  difference={difference}
-                  temperature={temperature}
-                  startMs={startMs}
-                  zone={zone}
-                />
-              ) : null}
+              <Beneath
+                scales={scales}
+                roomPx={roomPx}
+                zoom={zoom}
+                layers={every}
+                difference={difference}
+                temperature={temperature}
+                startMs={startMs}
+                zone={zone}
+              />
             </>
           )}
         />
@@ -175,96 +138,24 @@ export function ReviewStrip(props: ReviewStripProps) {
   );
 }
 
+/** Ctrl and the wheel zoom the strip, not the page: the browser takes that as settled unless it is told at once. */
+function useWheelZoom(area: RefObject<HTMLElement | null>, { zoom }: TimeWindowControl): void {
+  useEffect(() => {
+    const element = area.current;
+    const onWheel = (event: WheelEvent): void => {
+      if (!event.ctrlKey) return;
+      event.preventDefault();
+      zoom(event.deltaY < 0 ? 1.25 : 0.8);
+    };
+    element?.addEventListener('wheel', onWheel, { passive: false });
+    return () => element?.removeEventListener('wheel', onWheel);
+  }, [area, zoom]);
+}
+
 function toggled(before: ReadonlySet<string>, id: string): ReadonlySet<string> {
   const after = new Set(before);
   if (!after.delete(id)) after.add(id);
   return after;
-}
-
-function Overlay(props: {
-  readonly scales: StripScales;
-  readonly findings: readonly Finding[];
-  readonly selected: Finding | null;
-  readonly onSelect: (id: string) => void;
-  readonly onMark: ((stretch: TimeWindow) => void) | null;
-}) {
-  const { scales } = props;
-  const { selecting, ground } = useTimeSelection(scales, (stretch) => props.onMark?.(stretch));
-  const { box } = scales;
-  const area = selecting && {
-    from: scales.timePx(selecting.fromS),
-    length: (selecting.toS - selecting.fromS) * scales.pxPerS,
-  };
-  return (
-    <>
-      {props.onMark ? (
-        <rect
-          className="strip-ground"
-          x={box.leftPx}
-          y={box.topPx}
-          width={box.widthPx}
-          height={box.heightPx}
-          {...ground}
-        />
-      ) : null}
-      <FindingMarks
-        scales={scales}
-        findings={props.findings}
-        selected={props.selected?.id ?? null}
-        onSelect={props.onSelect}
-      />
-      {area ? (
-        <rect
-          className="strip-selection"
-          x={scales.flow === 'across' ? area.from : box.leftPx}
-          y={scales.flow === 'across' ? box.topPx : area.from}
-          width={scales.flow === 'across' ? area.length : box.widthPx}
-          height={scales.flow === 'across' ? box.heightPx : area.length}
-        />
-      ) : null}
-    </>
-  );
-}
-
-function Beneath(props: {
-  readonly scales: StripScales;
-  readonly zoom: TimeWindowControl;
-  readonly layers: ReturnType<typeof layersOf>;
-  readonly difference: ReturnType<typeof differenceOf>;
-  readonly temperature: 'C' | 'F';
-  readonly startMs: number;
-  readonly zone: string;
-}) {
-  const { scales, zoom, startMs, zone } = props;
-  const { leftPx, widthPx } = scales.box;
-  const whole = useMemo(() => viewOf(props.layers, zoom.whole, false), [props.layers, zoom.whole]);
-  const moment = (timeS: number) => clockTime(startMs + timeS * 1000, zone);
-  return (
-    <>
-      <DifferenceStrip
-        shown={zoom.shown}
-        leftPx={leftPx}
-        widthPx={widthPx}
-        timeS={props.difference.timeS}
-        differenceC={props.difference.differenceC}
-        bandC={BAND_C}
-        temperature={props.temperature}
-      />
-      <p className="review-difference-name hint">
-        measured − plan carried along, band ± {props.temperature === 'F' ? (BAND_C * 9) / 5 : BAND_C} °
-        {props.temperature}
-      </p>
-      <Overview
-        view={whole}
-        layers={props.layers.filter((layer) => layer.kind === 'planned' || layer.kind === 'measured')}
-        shown={zoom.shown}
-        onShow={zoom.show}
-        widthPx={widthPx}
-        leftPx={leftPx}
-        valueText={`${moment(zoom.shown.fromS)} to ${moment(zoom.shown.toS)}, ${durationText(zoom.shown.toS - zoom.shown.fromS)} of ${durationText(zoom.whole.toS - zoom.whole.fromS)}`}
-      />
-    </>
-  );
 }
 
 function findingsTable(

@@ -4,15 +4,18 @@ import { ServerData } from '~/lib/client/query';
 import { UnitsProvider } from '~/lib/client/units';
 import { STAGE_NAMES } from '~/components/words/names';
 import type { Finding } from '~/lib/contracts/runs';
+import { FINDING_TITLES } from '~/lib/review/words';
 import { useTimeWindow } from '../strip/useTimeWindow';
 import type { TimeWindow } from '../strip/window';
 import { AddFinding } from './AddFinding';
 import { AlignmentPanel } from './AlignmentPanel';
+import { STATE_WORDS } from './FindingCard';
 import { FindingPanel } from './FindingPanel';
 import { runReviewPropsSchema, type RunReviewProps } from './props';
 import { ReviewFigures } from './ReviewFigures';
 import { ReviewStrip } from './ReviewStrip';
 import './run-review.css';
+import './findings.css';
 import { SegmentsRow } from './SegmentsRow';
 import { useFindings, type NewFinding } from './use-review';
 import { around } from './view';
@@ -42,11 +45,15 @@ function placeOf(finding: Finding, props: RunReviewProps): string {
 
 function ReviewDesk(props: RunReviewProps) {
   const { fromS, toS } = props.series;
-  const zoom = useTimeWindow(useMemo(() => ({ fromS, toS }), [fromS, toS]));
   const { findings, decide, add } = useFindings(props);
   const [selectedId, setSelectedId] = useState<string | null>(null);
   const [marking, setMarking] = useState<TimeWindow | null>(null);
   const selected = findings.find((finding) => finding.id === selectedId) ?? null;
+  const mainS = selected && (selected.startS + selected.endS) / 2;
+  const zoom = useTimeWindow(
+    useMemo(() => ({ fromS, toS }), [fromS, toS]),
+    mainS,
+  );
   const { isZoomed, show } = zoom;
 
   const step = useCallback(
@@ -103,15 +110,18 @@ function ReviewDesk(props: RunReviewProps) {
           onClose={() => setSelectedId(null)}
         />
       ) : null}
+      {findings.length === 0 ? (
+        <p className="hint">The review found nothing to say against this firing.</p>
+      ) : null}
       <p id="review-keys" className="hint review-keys">
-        {findings.length === 0
-          ? 'The review found nothing to say against this firing. '
-          : 'J and K step through findings, C confirms, D dismisses. '}
-        + and − zoom, 0 shows the whole.{' '}
+        {findings.length === 0 ? '' : 'J and K step through findings, C confirms, D dismisses. '}+ and − zoom,
+        0 shows the whole.{' '}
         {props.mayDecide ? 'Drag across the strip to mark a finding, or press M for what is shown.' : ''}
       </p>
       <p className="sr-only" role="status">
-        {decide.isSuccess && selected ? `${selected.kind} ${selected.state}` : ''}
+        {decide.isSuccess && selected
+          ? `${FINDING_TITLES[selected.kind]}, ${STATE_WORDS[selected.state]}`
+          : ''}
       </p>
       <SegmentsRow plan={props.run.plan} segments={props.review.segments} />
       <AlignmentPanel {...props} />

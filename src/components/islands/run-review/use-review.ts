@@ -16,7 +16,7 @@ export function useSeries(
   props: RunReviewProps,
   shown: TimeWindow,
   isZoomed: boolean,
-): { series: Series; loading: boolean } {
+): { series: Series; loading: boolean; failed: boolean } {
   const rested = useRested(isZoomed ? shown : null);
   const query = useQuery({
     queryKey: ['series', props.run.id, props.review.logId, rested?.fromS ?? null, rested?.toS ?? null],
@@ -30,7 +30,7 @@ export function useSeries(
     placeholderData: keepPreviousData,
   });
   const series = rested !== null && query.data ? query.data : props.series;
-  return { series, loading: query.isFetching };
+  return { series, loading: query.isFetching, failed: rested !== null && (query.isError || query.isPaused) };
 }
 
 function useRested<T>(value: T): T {
