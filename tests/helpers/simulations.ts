@@ -21,6 +21,8 @@ export interface SimulationStory {
   kiln?: Partial<KilnPlateInput>;
   load?: LoadInput;
   chamberC?: OfTime;
+  airNeededKgPerS?: OfTime;
+  airInKgPerS?: OfTime;
   moulds?: MouldStory[];
   moments?: Record<number, Partial<SegmentMoments>>;
   openableS?: number | null;
@@ -95,6 +97,9 @@ export function toldSimulation(story: SimulationStory): Simulation {
     energyKWh: series((atS) => atS / 3600),
     fullPowerKW: 9,
     patternHeatKW: series(() => 0),
+    airNeededKgPerS: series(story.airNeededKgPerS ?? (() => 0)),
+    airInKgPerS: series(story.airInKgPerS ?? (() => 1)),
+    liningKW: series(() => 0),
     segmentAt,
     moulds,
     segments,

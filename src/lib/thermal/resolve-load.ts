@@ -8,7 +8,7 @@ import {
 } from '../materials';
 import type { HeatWorkLaw } from './heat-work';
 import type { Furniture, Mould, Pattern } from './load-schema';
-import type { PatternProperties } from './pattern-burnout';
+import type { CharAir, PatternProperties } from './pattern-burnout';
 import type { BodyProperties, Curve } from './properties';
 import { exchangeFactor } from './radiation';
 import { curveOf } from './resolve-kiln';
@@ -180,8 +180,46 @@ export function heatWorkLawOf(mould: Mould): HeatWorkLaw | null {
   return referenceC === null || activationKJPerMol === null ? null : { referenceC, activationKJPerMol };
 }
 
-/** A pattern's figures as the solver takes them. */
-export function patternProperties(pattern: Pattern): PatternProperties {
+/** Crooked ways through a porous wall: their length squared over its thickness squared. Handbooks, recalled: 2-4. */
+const TORTUOSITY = 3;
+
+/** The way of air through a mould's wall to its cavity. */
+function charAirOf(mould: Mould, pattern: Pattern): CharAir | null {
+  const material = findMaterial('moulds', mould.material);
+  if (material === undefined) return null;
+  const read = reader(material.properties, mould.overrides);
+  const openShare = (read.number('porosityShare') ?? 0) / TORTUOSITY;
+  const densityKgPerM3 = read.number('densityKgPerM3') ?? 0;
+  if (mould.form === 'shell') {
+    const wallM = mould.wallM ?? read.number('typicalWallM') ?? COMMON_WALL_M;
+    return { openShare, shapeM: mould.massKg / densityKgPerM3 / wallM ** 2 };
+  }
+  const patternDensity = reader(
+    findMaterial('patterns', pattern.material)?.properties ?? {},
+    pattern.overrides,
+  ).number('densityKgPerM3');
+  const cavityM3 = pattern.massKg / (patternDensity ?? 1000);
+  const wholeM3 = mould.massKg / densityKgPerM3 + cavityM3;
+  const diameterM = mould.diameterM ?? flaskDiameterM(wholeM3, mould.heightM);
+  const heightM = wholeM3 / (Math.PI * (diameterM / 2) ** 2);
+  // A round cavity along the axis of the flask: 2πH / ln(R/r).
+  const cavityM = Math.sqrt(cavityM3 / (Math.PI * heightM));
+  return { openShare, shapeM: (2 * Math.PI * heightM) / Math.log(Math.max(1.05, diameterM / 2 / cavityM)) };
+}
+
+/**
+ * Time by which the middle of a solid pattern trails the wall that heats it from both sides: (s/2)²·4/(π²·a), the first
+ * mode of a plate (Carslaw and Jaeger, Conduction of Heat in Solids, 3.3). None for a hollow one, or where no thickness is said.
+ */
+function patternLagS({ thickestM, hollow }: Pattern, read: ReturnType<typeof reader>): number {
+  if (thickestM === null || hollow) return 0;
+  const capacity = (read.number('densityKgPerM3') ?? 0) * (read.number('heatCapacityJPerKgK') ?? 0);
+  const conductivity = read.number('conductivityWPerMK') ?? 0;
+  return conductivity > 0 ? ((thickestM / 2) ** 2 * 4 * capacity) / (Math.PI ** 2 * conductivity) : 0;
+}
+
+/** A pattern's figures as the solver takes them, in the mould that holds it. */
+export function patternProperties(pattern: Pattern, mould: Mould): PatternProperties {
   const material = found(findMaterial('patterns', pattern.material), 'pattern material', pattern.material);
   const read = reader(material.properties, pattern.overrides);
   const { steps } = material.kinetics;
@@ -194,6 +232,8 @@ export function patternProperties(pattern: Pattern): PatternProperties {
     ashShare: read.number('ashShare') ?? 0,
     heatOfCombustionJPerKg: read.number('heatOfCombustionJPerKg') ?? 0,
     airKgPerKg: read.number('airKgPerKg') ?? 0,
+    charAir: charAirOf(mould, pattern),
+    lagS: patternLagS(pattern, read),
     steps: steps.map((step) => ({
       massShare: step.massShare / total,
       activationJPerMol: step.activationKJPerMol * 1000,

@@ -65,7 +65,7 @@ export function firingModelOf(input: {
     index,
     count: mould.count,
     body: bodyOf(mouldBody(mould, around)),
-    pattern: mould.pattern === null ? null : patternProperties(mould.pattern),
+    pattern: mould.pattern === null ? null : patternProperties(mould.pattern, mould),
     heatWork: heatWorkLawOf(mould),
   }));
   const furniture = load.furniture.map((piece) => bodyOf(furnitureBody(piece, around)));

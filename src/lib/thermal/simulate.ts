@@ -36,6 +36,9 @@ class FiringRecorder implements Watch {
   readonly powerKW = new GrowingSeries();
   readonly energyKWh = new GrowingSeries();
   readonly patternHeatKW = new GrowingSeries();
+  readonly airNeededKgPerS = new GrowingSeries();
+  readonly airInKgPerS = new GrowingSeries();
+  readonly liningKW = new GrowingSeries();
   readonly segmentIndex = new GrowingSeries();
   readonly #fire: PatternFire;
   readonly #kiln: KilnPlate;
@@ -116,6 +119,9 @@ class FiringRecorder implements Watch {
     this.powerKW.push(stepS > 0 ? (booked.inputJ - this.#lastInputJ) / stepS / 1000 : 0);
     this.energyKWh.push(booked.inputJ / J_PER_KWH);
     this.patternHeatKW.push(patternHeatKW);
+    this.airNeededKgPerS.push(this.#fire.airNeededKgPerS);
+    this.airInKgPerS.push(this.#fire.airInKgPerS);
+    this.liningKW.push(stepS > 0 ? liningW(this.model) / 1000 : 0);
     this.segmentIndex.push(index);
     this.#lastC = tempC;
     this.#lastInputJ = booked.inputJ;
@@ -130,6 +136,10 @@ class FiringRecorder implements Watch {
     return tempC + offsetC - slope * lagS + behindC * Math.exp(-stepS / lagS);
   }
 }
+
+/** Heat that the lining takes in at the end of the step last taken, W; its hot-face skin belongs to the chamber. */
+const liningW = ({ lining, chamber }: FiringModel): number =>
+  lining.slopeWPerK * chamber.trial.stageTwoC - lining.offsetW;
 
 /**
  * Fires a load in a kiln by a profile, under ideal control within the kiln's power.
@@ -162,6 +172,9 @@ export function simulate(input: FiringInput, steps: StepSettings = DEFAULT_STEPS
     energyKWh: recorder.energyKWh.toArray(),
     fullPowerKW: model.kiln.fullInputW / 1000,
     patternHeatKW: recorder.patternHeatKW.toArray(),
+    airNeededKgPerS: recorder.airNeededKgPerS.toArray(),
+    airInKgPerS: recorder.airInKgPerS.toArray(),
+    liningKW: recorder.liningKW.toArray(),
     segmentAt: Uint8Array.from(recorder.segmentIndex.toArray()),
     moulds: recorder.moulds.map((mould) => mould.trace()),
     segments,

@@ -89,6 +89,11 @@ export interface Simulation {
   fullPowerKW: number;
   /** Heat of the burning pattern over the step that ends here, kW. */
   patternHeatKW: Float64Array;
+  /** Air that burning all of the patterns' gas and char takes, and the air that comes in for it, kg/s over the step that ends here. */
+  airNeededKgPerS: Float64Array;
+  airInKgPerS: Float64Array;
+  /** Heat that goes into the lining, kW; negative where it gives heat back. */
+  liningKW: Float64Array;
   /** Index of the segment of each moment (the first moment belongs to segment 0). */
   segmentAt: Uint8Array;
   moulds: MouldTrace[];
