@@ -3,7 +3,7 @@ import { findElement } from '~/lib/materials/elements';
 import { findMaterial } from '~/lib/materials';
 import { alloyEnthalpyJPerKg, alloyTempC, componentSumErrorShare } from '~/lib/thermal/melt/alloy-heat';
 import { liquidEnthalpyJPerMol, solidEnthalpyJPerMol } from '~/lib/thermal/melt/element-enthalpy';
-import { alloyOf } from '~/lib/thermal/melt/pour';
+import { alloyOf } from '~/lib/thermal/melt/charge';
 import reference from '../../fixtures/references/melt-enthalpy.json';
 
 function element(symbol: string) {

@@ -4,7 +4,7 @@ import { alloyEnthalpyJPerKg } from '~/lib/thermal/melt/alloy-heat';
 import { carriedC, carriedUntilS } from '~/lib/thermal/melt/carry';
 import { fillOf, usualSuperheatK } from '~/lib/thermal/melt/fill';
 import { crucibleSize, meltingOf, usualCrucibleKg } from '~/lib/thermal/melt/melting';
-import { alloyOf } from '~/lib/thermal/melt/pour';
+import { alloyOf } from '~/lib/thermal/melt/charge';
 import { flowsForS, type PourWall, wallAfterS } from '~/lib/thermal/melt/pour-wall';
 
 function bronze() {

@@ -42,6 +42,53 @@ export const cautionSchema = z.strictObject({
 });
 export type Caution = z.infer<typeof cautionSchema>;
 
+export const moneySchema = z.strictObject({
+  amount: z.string().regex(/^-?\d+(\.\d+)?$/),
+  currency: z.string().length(3),
+});
+
+const fillSchema = z.strictObject({
+  judgement: z.enum(['likely-fills', 'may-misrun', 'likely-misruns']),
+  /** How long metal goes on flowing in the thinnest section, s: best guess and the range it may well lie in. */
+  flowsS: n,
+  flowsFromS: n,
+  flowsToS: n,
+  /** How long filling the mould is taken to last, s. */
+  fillS: n,
+  /** Superheat as the metal enters, and what the trade pours such sections with, °C. */
+  superheatC: n,
+  usualSuperheatFromC: n,
+  usualSuperheatToC: n,
+});
+
+export const pourEstimateSchema = z.strictObject({
+  /** Into charge and crucible; into the charge alone; what the component sum may be off by. */
+  heatKWh: n,
+  chargeKWh: n,
+  chargeErrorKWh: n,
+  /** Electricity, or fuel on its higher heating value; null: no furnace is chosen. */
+  inputKWh: n.nullable(),
+  fuelKg: n,
+  fuelM3: n,
+  co2Kg: n.nullable(),
+  cost: moneySchema.nullable(),
+  meltS: n.nullable(),
+  /** Seconds from the kiln's start at which the furnace is lit and the metal is ready; null: no furnace, or nothing to be ready for. */
+  furnaceStartS: n.nullable(),
+  metalReadyS: n.nullable(),
+  /** When mould and metal are both ready; null: never. */
+  atS: n.nullable(),
+  metalAtPourC: n,
+  liquidusC: n,
+  /** How long the metal may be carried before it has hardly any superheat, s. */
+  metalWindowS: n,
+  moulds: z.array(
+    z.strictObject({ mould: z.number().int(), coreLeavingC: n, coreAtPourC: n, fill: fillSchema.nullable() }),
+  ),
+});
+/** The pour that a firing leads to. Every figure is an estimate. */
+export type PourEstimate = z.infer<typeof pourEstimateSchema>;
+
 export const estimateSegmentSchema = z.strictObject({
   plannedStartS: n,
   plannedEndS: n,
@@ -50,11 +97,8 @@ export const estimateSegmentSchema = z.strictObject({
   endS: n,
   energyKWh: n,
   kilnLimited: z.boolean(),
-});
-
-export const moneySchema = z.strictObject({
-  amount: z.string().regex(/^-?\d+(\.\d+)?$/),
-  currency: z.string().length(3),
+  /** How much longer the hold would have to last for the shown mould's core to be within 10 °C of it, s; null: it is, or nothing is held. */
+  soakMoreS: n.nullable(),
 });
 
 export const estimateSchema = z.strictObject({
@@ -96,6 +140,14 @@ export const estimateSchema = z.strictObject({
     patternKWh: n,
     imbalance: n,
   }),
+  /** The highest cone that the shown mould's core brings down, "about cone n"; null: not even 019. */
+  cone: z.string().nullable(),
+  /** What the lines of moulds bear of energy and cost, by mass with water and pattern. */
+  split: z.array(
+    z.strictObject({ mould: z.number().int(), share: n, energyKWh: n, cost: moneySchema.nullable() }),
+  ),
+  /** Null where the load has no pour. */
+  pour: pourEstimateSchema.nullable(),
   cautions: z.array(cautionSchema),
 });
 /** What the models say of one firing: times, energy, curves, cautions. Every figure is an estimate. */

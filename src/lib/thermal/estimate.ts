@@ -1,9 +1,12 @@
-import { fuelOf } from '../planning';
+import { fuelOf, massShares } from '../planning';
 import { type CautionContext, cautionsOf } from './cautions';
-import type { Caution, Estimate } from './estimate-schema';
+import { lastConeDown } from './cone';
+import type { Caution, Estimate, PourEstimate } from './estimate-schema';
+import { type PourForecast, pourOf } from './melt/pour';
 import { readyS, slowestMould } from './readiness';
 import { type FiringInput, simulate } from './simulate';
 import type { MouldTrace, Simulation } from './simulation';
+import { soakMoreS } from './soak';
 
 /** What an estimate is made from. */
 export interface EstimateInput extends FiringInput {
@@ -32,13 +35,18 @@ const NOTHING_KNOWN: CautionContext = {
 export function estimate(input: EstimateInput): Estimate {
   const { mouldIndex = null, context = NOTHING_KNOWN, ...firing } = input;
   const simulation = simulate(firing);
-  return estimateOf(simulation, { mouldIndex, cautions: cautionsOf(simulation, context) });
+  const pour = pourOf(simulation, context.furnace ?? null);
+  return estimateOf(simulation, { mouldIndex, cautions: cautionsOf(simulation, context, pour), pour });
 }
 
 /** The estimate that a simulation amounts to. */
 export function estimateOf(
   simulation: Simulation,
-  { mouldIndex, cautions }: { mouldIndex: number | null; cautions: Caution[] },
+  {
+    mouldIndex,
+    cautions,
+    pour,
+  }: { mouldIndex: number | null; cautions: Caution[]; pour: PourForecast | null },
 ): Estimate {
   const shown = mouldIndex ?? slowestMould(simulation);
   const mould = shown === null ? undefined : simulation.moulds[shown];
@@ -54,7 +62,7 @@ export function estimateOf(
     peakC: simulation.chamberC.reduce((peak, value) => Math.max(peak, value), -Infinity),
     readyS: slowest === undefined ? null : readyS(simulation, slowest),
     openableS: simulation.openableS,
-    segments: simulation.segments.map((moments) => ({
+    segments: simulation.segments.map((moments, index) => ({
       plannedStartS: moments.plannedStartS,
       plannedEndS: moments.plannedEndS,
       startS: moments.startS,
@@ -62,11 +70,59 @@ export function estimateOf(
       endS: moments.endS,
       energyKWh: moments.energyKWh,
       kilnLimited: moments.kilnLimited,
+      soakMoreS: mould === undefined ? null : soakMoreS(simulation, mould, index),
     })),
     mould: shown,
     curve: curveOf(simulation, mould),
     energy: simulation.energy,
+    cone: mould === undefined ? null : (lastConeDown(simulation.timeS, mould.coreC)?.name ?? null),
+    split: massShares(simulation.load).map((share, index) => ({
+      mould: index,
+      share,
+      energyKWh: share * simulation.energy.inKWh,
+      cost: null,
+    })),
+    pour: pour === null ? null : pourEstimate(pour),
     cautions,
+  };
+}
+
+/** Longest that metal is said to go on flowing, s: what is longer is long enough. */
+const LONG_FLOW_S = 600;
+
+/** The pour without money: that comes from the furnace's tariff. */
+function pourEstimate({ melting, moulds, ...pour }: PourForecast): PourEstimate {
+  return {
+    heatKWh: melting.heatKWh,
+    chargeKWh: melting.chargeKWh,
+    chargeErrorKWh: melting.chargeErrorKWh,
+    inputKWh: melting.inputKWh,
+    fuelKg: melting.fuelKg,
+    fuelM3: melting.fuelM3,
+    co2Kg: null,
+    cost: null,
+    meltS: melting.durationS,
+    furnaceStartS: pour.furnaceStartS,
+    metalReadyS: pour.metalReadyS,
+    atS: pour.atS,
+    metalAtPourC: pour.metalAtPourC,
+    liquidusC: pour.liquidusC,
+    metalWindowS: pour.metalWindowS,
+    moulds: moulds.map(({ index, coreLeavingC, coreAtPourC, fill }) => ({
+      mould: index,
+      coreLeavingC,
+      coreAtPourC,
+      fill: fill && {
+        judgement: fill.judgement,
+        flowsS: Math.min(LONG_FLOW_S, fill.flowsS),
+        flowsFromS: Math.min(LONG_FLOW_S, fill.flowsFromS),
+        flowsToS: Math.min(LONG_FLOW_S, fill.flowsToS),
+        fillS: fill.fillS,
+        superheatC: fill.superheatK,
+        usualSuperheatFromC: fill.usualSuperheatK[0],
+        usualSuperheatToC: fill.usualSuperheatK[1],
+      },
+    })),
   };
 }
 

@@ -51,13 +51,50 @@ export const furnitureSchema = z.strictObject({
 });
 export type Furniture = z.infer<typeof furnitureSchema>;
 
+export const CHARGE_KINDS = ['ingot', 'returns', 'addition'] as const;
+
+/** One part of a charge: ingot, returns of earlier pours, or an addition, with a note where it says more. */
+const chargePartSchema = z.strictObject({
+  kind: z.enum(CHARGE_KINDS),
+  /** Of the table; left out: the metal of the pour. */
+  metal: materialId.optional(),
+  massKg,
+  note: z.string().max(200).optional(),
+});
+
+/** An alloy of the studio's own, by component: mass shares by chemical symbol, and where it melts. */
+const ownAlloySchema = z
+  .strictObject({
+    composition: z.record(z.string().regex(/^[A-Z][a-z]?$/), z.number().gt(0).max(1)),
+    solidusC: z.number().min(100).max(1800),
+    liquidusC: z.number().min(100).max(1800),
+  })
+  .refine(({ solidusC, liquidusC }) => solidusC <= liquidusC, {
+    message: 'a solidus is no higher than the liquidus',
+    path: ['solidusC'],
+  })
+  .refine(
+    ({ composition }) =>
+      Math.abs(Object.values(composition).reduce((sum, each) => sum + each, 0) - 1) < 0.005,
+    { message: 'mass shares that add up to 1', path: ['composition'] },
+  );
+
+// What was added to a pour later is optional and has no default: kept versions must keep their canonical form and seal.
 export const pourSchema = z.strictObject({
   metal: materialId,
   chargeKg: massKg,
   furnaceId: z.uuid().toLowerCase().nullable().default(null),
   pourC: z.number().min(100).max(1800),
   carryS: z.number().min(0).max(3600).default(30),
+  /** Left out: a clay-graphite crucible that the charge fills. */
+  crucibleKg: z.number().min(0).max(2000).optional(),
+  /** What the charge is made up of; left out: all of it the metal named. */
+  charge: z.array(chargePartSchema).max(40).optional(),
+  /** Left out: the metal named, by the table. */
+  alloy: ownAlloySchema.optional(),
 });
+export type Pour = z.infer<typeof pourSchema>;
+export type ChargePart = z.infer<typeof chargePartSchema>;
 
 export const loadSchema = z.strictObject({
   /** Temperature of the load when it goes in; null: that of the kiln. */

@@ -1,8 +1,7 @@
-import type { Kiln, Tariff, Thermocouple } from '~/lib/contracts/equipment';
-import { co2Of, costOf, tariffFits, zoneOffset } from '~/lib/planning';
+import type { Furnace, Kiln, Tariff, Thermocouple } from '~/lib/contracts/equipment';
+import { zoneOffset } from '~/lib/planning';
+import { forecastOf } from '~/lib/planning/forecast';
 import { issuesOf } from '~/lib/profile/validate';
-import { cautionsOf } from '~/lib/thermal/cautions';
-import { estimateOf } from '~/lib/thermal/estimate';
 import type { Estimate } from '~/lib/thermal/estimate-schema';
 import { loadSchema } from '~/lib/thermal/load-schema';
 import { FiringTooStiff } from '~/lib/thermal/march';
@@ -14,6 +13,7 @@ import type { ProfileDocument } from './document';
 /** What an estimate in the editor depends on besides the document. */
 export interface Surroundings {
   readonly kilns: readonly Kiln[];
+  readonly furnaces: readonly Furnace[];
   readonly tariffs: readonly Tariff[];
   readonly thermocouples: readonly Thermocouple[];
   readonly ambientC: number;
@@ -27,7 +27,7 @@ export interface Surroundings {
 const EMPTY_LOAD = loadSchema.parse({});
 
 /**
- * What the models say of a document: the same simulation, cautions and prices that the server computes for the record.
+ * What the models say of a document: the same forecast that the server computes for the record.
  *
  * @returns null where no kiln is chosen, the plan is longer than a profile may be, or it cannot be computed
  */
@@ -41,23 +41,23 @@ function estimateDocument(
   const load = document.load ?? EMPTY_LOAD;
   const simulation = simulatedOrNull({ profile, kiln, load, ambientC: around.ambientC });
   if (!simulation) return null;
-  const offsetMinutesAt = zoneOffset(around.zone);
-  const thermocouple = around.thermocouples.find((candidate) => candidate.id === kiln.thermocoupleId) ?? null;
-  const cautions = cautionsOf(simulation, {
-    startMs: around.startMs,
-    offsetMinutesAt,
-    attendedHours: around.attendedHours,
-    thermocouple,
-    units: around.units,
+  const furnace = around.furnaces.find((candidate) => candidate.id === load.pour?.furnaceId) ?? null;
+  const planOf = (tariffId: string | null | undefined) =>
+    around.tariffs.find((candidate) => candidate.id === tariffId)?.plan ?? null;
+  return forecastOf(simulation, {
+    mouldIndex: null,
+    context: {
+      startMs: around.startMs,
+      offsetMinutesAt: zoneOffset(around.zone),
+      attendedHours: around.attendedHours,
+      thermocouple: around.thermocouples.find((candidate) => candidate.id === kiln.thermocoupleId) ?? null,
+      furnace,
+      units: around.units,
+    },
+    kilnPlan: planOf(kiln.tariffId),
+    furnacePlan: planOf(furnace?.tariffId),
+    pricedFromMs: around.startMs,
   });
-  const tariff = around.tariffs.find((candidate) => candidate.id === kiln.tariffId);
-  const plan = tariff && tariffFits(tariff.plan, kiln) ? tariff.plan : null;
-  const fuel = kiln.energy === 'gas' ? kiln.fuel : 'electricity';
-  return {
-    ...estimateOf(simulation, { mouldIndex: null, cautions }),
-    ...co2Only(co2Of(fuel, simulation.energy.inKWh, plan)),
-    cost: plan ? costOf(plan, simulation, around.startMs, offsetMinutesAt).cost : null,
-  };
 }
 
 /** Null where kiln and load are so far from any real ones that they would hold the page up. */
@@ -76,5 +76,3 @@ export function modelOf(around: Surroundings): (document: ProfileDocument) => Es
   if (startMs === null) return () => null;
   return (document) => estimateDocument(document, { ...around, startMs });
 }
-
-const co2Only = ({ co2Kg }: { readonly co2Kg: number }): { co2Kg: number } => ({ co2Kg });

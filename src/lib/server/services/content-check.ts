@@ -2,6 +2,7 @@ import { findMaterial, type MaterialKind } from '~/lib/materials';
 import type { SealedContent } from '~/lib/profile/seal';
 import { issuesOf } from '~/lib/profile/validate';
 import type { Load } from '~/lib/thermal/load-schema';
+import { pourIssues } from '~/lib/thermal/melt/charge';
 import type { Actor } from '../auth/actor';
 import type { Tx } from '../database';
 import { notValid, type Issue } from '../errors';
@@ -21,7 +22,10 @@ export function loadIssues(load: Load | null): Issue[] {
     if (mould.pattern) check('patterns', mould.pattern.material, `moulds.${index}.pattern.material`);
   });
   load.furniture.forEach((piece, index) => check('furniture', piece.material, `furniture.${index}.material`));
-  if (load.pour) check('metals', load.pour.metal, 'pour.metal');
+  if (load.pour) {
+    check('metals', load.pour.metal, 'pour.metal');
+    issues.push(...pourIssues(load.pour).map((issue) => ({ ...issue, path: `load.pour.${issue.path}` })));
+  }
   return issues;
 }
 

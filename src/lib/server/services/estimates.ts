@@ -1,22 +1,22 @@
 import type { z } from '~/lib/zod';
-import type { Kiln } from '~/lib/contracts/equipment';
+import type { Furnace, Kiln } from '~/lib/contracts/equipment';
 import type { estimateRequestSchema, estimateRoutes } from '~/lib/contracts/profiles';
-import { co2Of, costOf, tariffFits, zoneOffset, type OffsetMinutesAt, type TariffPlan } from '~/lib/planning';
+import { tariffFits, zoneOffset, type TariffPlan } from '~/lib/planning';
+import { forecastOf } from '~/lib/planning/forecast';
 import type { Profile } from '~/lib/profile/schema';
 import { issuesOf } from '~/lib/profile/validate';
 import { cautionsOf, type CautionContext } from '~/lib/thermal/cautions';
 import type { Caution, Estimate } from '~/lib/thermal/estimate-schema';
-import { estimateOf } from '~/lib/thermal/estimate';
 import type { KilnPlate } from '~/lib/thermal/kiln-schema';
 import { loadSchema, type Load } from '~/lib/thermal/load-schema';
-import type { Simulation } from '~/lib/thermal/simulation';
 import { isOnlyStudent, type Actor } from '../auth/actor';
 import type { Tx } from '../database';
-import { notFound, notValid, type Issue } from '../errors';
+import { HoldfastError, notFound, notValid, type Issue } from '../errors';
 import { studioRules } from '../repositories/studio-rules';
 import { thermocouples } from '../repositories/thermocouples';
 import { loadIssues } from './content-check';
 import { simulated } from './firing';
+import { getFurnace } from './furnaces';
 import { kilnFor, liningIssues, plateOf, requireLinks } from './kilns';
 import { tariffFor } from './tariffs';
 
@@ -41,15 +41,39 @@ export async function estimateFiring(
   const plate = plateOf(kiln);
   const load = request.load ?? loadSchema.parse({});
   requireComputable(request.profile, plate, load, query);
-  const plan = await planFor(actor, request, kiln, plate);
+  const kilnPlan = await planFor(actor, request, kiln, plate);
   const startMs = request.startAt === undefined ? null : Date.parse(request.startAt);
-  const context = await contextOf(actor, kiln, startMs);
+  const furnace = await pouringFurnace(actor, load);
+  const context = { ...(await contextOf(actor, kiln, startMs)), furnace };
   const simulation = simulated({ profile: request.profile, kiln: plate, load, ambientC: request.ambientC });
-  const found = estimateOf(simulation, {
+  const found = forecastOf(simulation, {
     mouldIndex: query.mould ?? null,
-    cautions: cautionsOf(simulation, context),
+    context,
+    kilnPlan,
+    furnacePlan: (await tariffFor(actor, furnace?.tariffId ?? null))?.plan ?? null,
+    pricedFromMs: startMs ?? now.getTime(),
   });
-  return { ...found, ...priced(actor, simulation, plan, startMs ?? now.getTime(), context.offsetMinutesAt) };
+  return isOnlyStudent(actor) ? withoutMoney(found) : found;
+}
+
+/** What a student is not shown. */
+const withoutMoney = (estimate: Estimate): Estimate => ({
+  ...estimate,
+  cost: null,
+  split: estimate.split.map((line) => ({ ...line, cost: null })),
+  pour: estimate.pour && { ...estimate.pour, cost: null },
+});
+
+/** The furnace that the load's pour names; null: none, or one that this person may not see. */
+async function pouringFurnace(actor: Actor, load: Load, tx?: Tx): Promise<Furnace | null> {
+  const furnaceId = load.pour?.furnaceId ?? null;
+  if (furnaceId === null) return null;
+  try {
+    return await getFurnace(actor, furnaceId, tx);
+  } catch (error) {
+    if (error instanceof HoldfastError && error.code === 'not-found') return null;
+    throw error;
+  }
 }
 
 type Links = Pick<Kiln, 'thermocoupleId' | 'tariffId'>;
@@ -72,7 +96,8 @@ export async function versionCautions(
   const kiln = await kilnFor(actor, content.kilnId, tx);
   const load = content.load ?? loadSchema.parse({});
   const simulation = simulated({ profile: content.profile, kiln: plateOf(kiln), load, ambientC: ROOM_C });
-  return cautionsOf(simulation, await contextOf(actor, kiln, null, tx));
+  const context = await contextOf(actor, kiln, null, tx);
+  return cautionsOf(simulation, { ...context, furnace: await pouringFurnace(actor, load, tx) });
 }
 
 /** What the rules go by besides the curves: the studio's hours, zone and units, and the kiln's thermocouple. */
@@ -91,20 +116,6 @@ async function contextOf(
     thermocouple,
     units: rules.units,
   };
-}
-
-function priced(
-  actor: Actor,
-  simulation: Simulation,
-  plan: TariffPlan | null,
-  startMs: number,
-  offsetMinutesAt: OffsetMinutesAt,
-): Pick<Estimate, 'cost' | 'co2Kg'> {
-  const { kiln } = simulation;
-  const energy = kiln.energy === 'gas' ? kiln.fuel : 'electricity';
-  const { co2Kg } = co2Of(energy, simulation.energy.inKWh, plan);
-  const shown = plan !== null && !isOnlyStudent(actor);
-  return { co2Kg, cost: shown ? costOf(plan, simulation, startMs, offsetMinutesAt).cost : null };
 }
 
 /** The tariff that the request names, else the kiln's own where it prices what the kiln burns. */

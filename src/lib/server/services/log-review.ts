@@ -32,6 +32,7 @@ export const predictionOf = (frozen: Frozen): Estimate =>
   estimateOf(simulated({ profile: frozen.profile, kiln: frozen.kiln, load: frozen.load, ambientC: 20 }), {
     mouldIndex: null,
     cautions: [],
+    pour: null,
   });
 
 /** Lays a log over its plan and finds the deviations. Pure: stores nothing. */

@@ -1,4 +1,5 @@
 import type { Caution } from '../estimate-schema';
+import { soakMoreS } from '../soak';
 import { type CautionRule, segmentsOf, seriesAt } from './view';
 
 /** A core this near its target counts as there. */
@@ -16,12 +17,14 @@ export const coreBehindAtHoldEnd: CautionRule = (view) => {
       const coreC = seriesAt(simulation.timeS, trace.coreC, moments.endS);
       const behindC = segment.toC >= fromC ? segment.toC - coreC : coreC - segment.toC;
       if (!(behindC > THERE_C)) continue;
+      const moreS = soakMoreS(simulation, trace, index);
+      const more = moreS === null ? '' : ` It needs about ${words.time(Math.ceil(moreS / 60) * 60)} more.`;
       cautions.push({
         code: 'core-behind-at-hold-end',
         severity: behindC > FAR_C ? 'warn' : 'note',
         segment: index,
         atS: moments.endS,
-        text: `${name} is at ${words.temp(coreC)} inside when the hold at ${words.temp(segment.toC)} ends, ${words.difference(behindC)} short of it.`,
+        text: `${name} is at ${words.temp(coreC)} inside when the hold at ${words.temp(segment.toC)} ends, ${words.difference(behindC)} short of it.${more}`,
         source: 'Conduction through the wall, film outside included',
       });
     }

@@ -1,5 +1,7 @@
 import type { Caution } from '../estimate-schema';
+import type { PourForecast } from '../melt/pour';
 import type { Simulation } from '../simulation';
+import { burnoutStarved, offgasPeak } from './air';
 import { burningHeatsKiln } from './burning';
 import { coreBehindAtHoldEnd } from './core';
 import { cristobalite, heatWorkShort, oversintered } from './heat-work';
@@ -7,12 +9,14 @@ import { kilnCannotFollow, opensHot, programmerCannotHoldIt } from './kiln';
 import { aboveKilnLimit, aboveMaterialLimit, aboveThermocoupleLimit } from './limits';
 import { burnoutIncomplete, noDrainStep, patternExpandsFirst } from './pattern';
 import { attendedAtNight } from './people';
+import { metalNotReady, mouldColdAtPour } from './pour';
 import { coolingTooFast, inversionTooFast, tooSteepByRate } from './rates';
 import { tooSteepByStress } from './stress';
 import { type CautionContext, type CautionRule, firingView } from './view';
 import { steamInWall } from './water';
+import { sulphurRisk } from './sulphur';
 
-export type { CautionContext } from './view';
+export type { CautionContext, PouringFurnace } from './view';
 
 const RULES: readonly CautionRule[] = [
   aboveKilnLimit,
@@ -24,6 +28,9 @@ const RULES: readonly CautionRule[] = [
   patternExpandsFirst,
   noDrainStep,
   burnoutIncomplete,
+  burnoutStarved,
+  offgasPeak,
+  sulphurRisk,
   burningHeatsKiln,
   tooSteepByRate,
   tooSteepByStress,
@@ -33,6 +40,8 @@ const RULES: readonly CautionRule[] = [
   heatWorkShort,
   oversintered,
   cristobalite,
+  metalNotReady,
+  mouldColdAtPour,
   attendedAtNight,
   opensHot,
 ];
@@ -45,10 +54,15 @@ const RANK = { stop: 0, warn: 1, note: 2 } as const;
  *
  * @param simulation a firing as the solver computed it
  * @param context what the rules need besides: start, time zone, attended hours, thermocouple, units of the sentences
+ * @param pour what `pourOf` says of it, where it is known already
  * @returns gravest first, then in time order
  */
-export function cautionsOf(simulation: Simulation, context: CautionContext): Caution[] {
-  const view = firingView(simulation, context);
+export function cautionsOf(
+  simulation: Simulation,
+  context: CautionContext,
+  pour?: PourForecast | null,
+): Caution[] {
+  const view = firingView(simulation, context, pour);
   const gravest = new Map<string, Caution>();
   for (const caution of RULES.flatMap((rule) => rule(view))) {
     const key = `${caution.code}/${caution.segment ?? ''}`;

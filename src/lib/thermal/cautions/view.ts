@@ -19,6 +19,8 @@ import {
 import type { Segment } from '../../profile/schema';
 import type { Caution } from '../estimate-schema';
 import type { Mould, Pattern } from '../load-schema';
+import type { MeltingFurnace } from '../melt/melting';
+import { type PourForecast, pourOf } from '../melt/pour';
 import type { MouldTrace, Simulation } from '../simulation';
 
 /** What a rule needs to know besides the simulation. */
@@ -31,9 +33,18 @@ export interface CautionContext {
   attendedHours: { fromMinute: number; toMinute: number } | null;
   /** The thermocouple that controls the kiln; null: not stated. */
   thermocouple: { type: string; sheathM: number | null; maxC: number | null } | null;
+  /** The furnace that the pour names; null or absent: none is known. */
+  furnace?: PouringFurnace | null;
   /** Units of the sentences; metric if absent. */
   units?: UnitPreferences;
 }
+
+/** A furnace as the cautions know it. */
+export type PouringFurnace = MeltingFurnace & {
+  readonly name: string;
+  readonly capacityKg: number;
+  readonly maxC: number;
+};
 
 /** A mould of the load with its trace and its materials. */
 export interface MouldView {
@@ -63,6 +74,8 @@ export interface FiringView {
   simulation: Simulation;
   context: CautionContext;
   moulds: MouldView[];
+  /** Null where the load has no pour. */
+  pour: PourForecast | null;
   words: Words;
 }
 
@@ -96,11 +109,16 @@ function mouldView(trace: MouldTrace, mould: Mould | undefined): MouldView[] {
   ];
 }
 
-export function firingView(simulation: Simulation, context: CautionContext): FiringView {
+export function firingView(
+  simulation: Simulation,
+  context: CautionContext,
+  pour: PourForecast | null = pourOf(simulation, context.furnace ?? null),
+): FiringView {
   const { temperature: scale, mass, length } = context.units ?? METRIC;
   return {
     simulation,
     context,
+    pour,
     moulds: simulation.moulds.flatMap((trace) => mouldView(trace, simulation.load.moulds[trace.index])),
     words: {
       temp: (tempC) => formatTemperature(tempC, scale),

@@ -1,11 +1,11 @@
 import { findMaterial, type MetalMaterial, valueAt, withOverride } from '../../materials';
 import { pouring } from '../../materials/pouring';
-import type { Mould, Load } from '../load-schema';
+import type { Mould, Pour } from '../load-schema';
 import { readyS, slowestMould } from '../readiness';
 import { curveOf } from '../resolve-kiln';
 import type { MouldTrace, Simulation } from '../simulation';
-import type { Alloy } from './alloy-heat';
 import { carriedC, carriedUntilS, type Carried } from './carry';
+import { chargeAlloy } from './charge';
 import { type Fill, fillOf } from './fill';
 import { type Melting, type MeltingFurnace, meltingOf, usualCrucibleKg } from './melting';
 import { type PourWall, wallAfterS, wallBetween } from './pour-wall';
@@ -26,9 +26,12 @@ export interface PourForecast {
   /** Seconds from the kiln's start at which the furnace is lit, and the metal is ready; null: no furnace, or no moment to be ready for. */
   readonly furnaceStartS: number | null;
   readonly metalReadyS: number | null;
+  /** When the slowest mould is ready; null: never. */
+  readonly mouldReadyS: number | null;
   /** When mould and metal are both ready and leave kiln and furnace; null: the mould never is. */
   readonly atS: number | null;
   readonly metalAtPourC: number;
+  readonly liquidusC: number;
   /** How long the metal may be carried before it is no more than `LEAST_SUPERHEAT_K` above its liquidus, s. */
   readonly metalWindowS: number;
   readonly moulds: readonly MouldAtPour[];
@@ -36,8 +39,6 @@ export interface PourForecast {
 
 /** Superheat below which no section is poured, K. Common practice, no source. */
 export const LEAST_SUPERHEAT_K = 30;
-
-type Pour = NonNullable<Load['pour']>;
 
 /**
  * What furnace and kiln come to at the pour. The furnace is lit so as to be ready with the slowest mould, not before
@@ -65,8 +66,10 @@ export function pourOf(simulation: Simulation, furnace: MeltingFurnace | null): 
     melting,
     furnaceStartS,
     metalReadyS,
+    mouldReadyS,
     atS,
     metalAtPourC,
+    liquidusC: carried.alloy.liquidusC,
     metalWindowS: carriedUntilS(carried, carried.alloy.liquidusC + LEAST_SUPERHEAT_K),
     moulds:
       atS === null
@@ -77,22 +80,12 @@ export function pourOf(simulation: Simulation, furnace: MeltingFurnace | null): 
   };
 }
 
-/** A named metal as the melt model takes it. */
-export function alloyOf(metal: MetalMaterial): Alloy {
-  const { solidusC, liquidusC } = metal.properties;
-  return {
-    composition: metal.composition,
-    solidusC: valueAt(solidusC, 20),
-    liquidusC: valueAt(liquidusC, 20),
-  };
-}
-
 function carriedOf(pour: Pour, metal: MetalMaterial, ambientC: number): Carried {
   const liquidDensityKgPerM3 = valueAt(metal.properties.liquidDensityKgPerM3, 20);
   return {
-    alloy: alloyOf(metal),
+    alloy: chargeAlloy(pour, metal),
     chargeKg: pour.chargeKg,
-    crucibleKg: usualCrucibleKg(pour.chargeKg, liquidDensityKgPerM3),
+    crucibleKg: pour.crucibleKg ?? usualCrucibleKg(pour.chargeKg, liquidDensityKgPerM3),
     liquidDensityKgPerM3,
     pourC: pour.pourC,
     ambientC,

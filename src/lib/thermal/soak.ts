@@ -1,0 +1,38 @@
+import { READY_WITHIN_C } from './readiness';
+import type { MouldTrace, Simulation } from './simulation';
+
+/** Stretch of a hold's end from which the pace of the core is read, s. */
+const READ_OVER_S = 600;
+
+/**
+ * How much longer a hold would have to last for a mould's core to come within 10 °C of it: late in a hold the core nears the
+ * chamber as exp(−t/τ) (the slowest mode of the wall), so τ is read from its last ten minutes.
+ *
+ * @param index segment
+ * @returns s; null where nothing is held, the chamber itself is not there, the core is, or it does not come nearer
+ */
+export function soakMoreS(simulation: Simulation, mould: MouldTrace, index: number): number | null {
+  const segment = simulation.profile.segments[index];
+  const moments = simulation.segments[index];
+  if (segment === undefined || moments === undefined || segment.holdS <= 0 || !moments.arrived) return null;
+  const heldS = moments.endS - moments.rampEndS;
+  const overS = Math.min(READ_OVER_S, heldS / 2);
+  const endC = Math.abs(segment.toC - at(simulation.timeS, mould.coreC, moments.endS));
+  const beforeC = Math.abs(segment.toC - at(simulation.timeS, mould.coreC, moments.endS - overS));
+  if (!(endC > READY_WITHIN_C) || !(beforeC > endC)) return null;
+  return (overS / Math.log(beforeC / endC)) * Math.log(endC / READY_WITHIN_C);
+}
+
+/** Value of a series at a moment, straight between its moments. */
+function at(timeS: Float64Array, values: Float64Array, atS: number): number {
+  let low = 0;
+  let high = timeS.length - 1;
+  while (high - low > 1) {
+    const middle = (low + high) >> 1;
+    if ((timeS[middle] ?? 0) <= atS) low = middle;
+    else high = middle;
+  }
+  const spanS = (timeS[high] ?? 0) - (timeS[low] ?? 0);
+  const from = values[low] ?? NaN;
+  return spanS > 0 ? from + (((values[high] ?? from) - from) * (atS - (timeS[low] ?? 0))) / spanS : from;
+}
