@@ -3,6 +3,8 @@ import type { MouldTrace, Simulation } from './simulation';
 
 /** Stretch of a hold's end from which the pace of the core is read, s. */
 const READ_OVER_S = 600;
+/** What takes longer is held back by something else: water that boils, s. */
+const LONGEST_S = 7 * 24 * 3600;
 
 /**
  * How much longer a hold would have to last for a mould's core to come within 10 °C of it: late in a hold the core nears the
@@ -20,7 +22,8 @@ export function soakMoreS(simulation: Simulation, mould: MouldTrace, index: numb
   const endC = Math.abs(segment.toC - at(simulation.timeS, mould.coreC, moments.endS));
   const beforeC = Math.abs(segment.toC - at(simulation.timeS, mould.coreC, moments.endS - overS));
   if (!(endC > READY_WITHIN_C) || !(beforeC > endC)) return null;
-  return (overS / Math.log(beforeC / endC)) * Math.log(endC / READY_WITHIN_C);
+  const moreS = (overS / Math.log(beforeC / endC)) * Math.log(endC / READY_WITHIN_C);
+  return moreS < LONGEST_S ? moreS : null;
 }
 
 /** Value of a series at a moment, straight between its moments. */

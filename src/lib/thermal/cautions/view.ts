@@ -109,25 +109,29 @@ function mouldView(trace: MouldTrace, mould: Mould | undefined): MouldView[] {
   ];
 }
 
+/** How a person's units write quantities in a sentence. */
+export function wordsOf({ temperature: scale, mass, length }: UnitPreferences = METRIC): Words {
+  return {
+    temp: (tempC) => formatTemperature(tempC, scale),
+    difference: (intervalC) => formatInterval(intervalC, scale),
+    rate: (rateCPerH) => formatRate(rateCPerH, scale),
+    time: formatDuration,
+    mass: (massKg) => formatMass(massKg, mass),
+    length: (lengthM) => formatLength(lengthM, length),
+  };
+}
+
 export function firingView(
   simulation: Simulation,
   context: CautionContext,
   pour: PourForecast | null = pourOf(simulation, context.furnace ?? null),
 ): FiringView {
-  const { temperature: scale, mass, length } = context.units ?? METRIC;
   return {
     simulation,
     context,
     pour,
     moulds: simulation.moulds.flatMap((trace) => mouldView(trace, simulation.load.moulds[trace.index])),
-    words: {
-      temp: (tempC) => formatTemperature(tempC, scale),
-      difference: (intervalC) => formatInterval(intervalC, scale),
-      rate: (rateCPerH) => formatRate(rateCPerH, scale),
-      time: formatDuration,
-      mass: (massKg) => formatMass(massKg, mass),
-      length: (lengthM) => formatLength(lengthM, length),
-    },
+    words: wordsOf(context.units),
   };
 }
 
