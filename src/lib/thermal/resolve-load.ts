@@ -134,6 +134,7 @@ function waterOf(
   return {
     kgPerM3: (mould.waterKg / mould.massKg) * densityKgPerM3,
     addedConductivityWPerMK: Math.max(0, wet - dry) * wetness,
+    dryLayerShare: (read.number('porosityShare') ?? 1) / (read.number('tortuosity') ?? 1),
   };
 }
 
