@@ -39,7 +39,7 @@ export interface Drying {
   front: number;
   /** Water of the body at the start of the step, kg. */
   leftKg: number;
-  /** K between front and chamber for the step, kg/s. */
+  /** K between front and chamber, mean of the step, kg/s. */
   conductanceKgPerS: number;
   /** G·M/M_air of the air that comes to ONE such body, kg/s, and u of the room. */
   airKgPerS: number;
@@ -61,6 +61,8 @@ export interface Drying {
   twoKgPerS: number;
   /** The front was on the plateau in the first stage. */
   oneHeld: boolean;
+  /** It ended the step below the plateau. */
+  beside: boolean;
   /** Heat that the vapour did not take since it left below 100 °C, J: see `stored-heat.ts`. */
   sparedJ: number;
 }
@@ -106,6 +108,7 @@ export function dryingOf(properties: BodyProperties, grid: Grid): Drying | null 
     oneKgPerS: 0,
     twoKgPerS: 0,
     oneHeld: false,
+    beside: true,
     sparedJ: 0,
   };
 }
@@ -114,25 +117,31 @@ export function dryingOf(properties: BodyProperties, grid: Grid): Drying | null 
 const evaporationJPerKg = (tempC: number): number =>
   WATER_EVAPORATION_J_PER_KG + WATER_EVAPORATION_SLOPE_J_PER_KG_K * (WATER_BOILS_C - tempC);
 
-/** Finds the front of a wet body and what lies before it at the middle of the step, by the water that left in the last. */
+/**
+ * Finds the front of a wet body and the mean conductance before it over the step. As the front recedes, resistance grows by r
+ * for each kilogram that leaves: m/K + r·m²/2 = ln(u_s/u)·Δt (the shrinking core), hence the mean
+ * 2 / (1/K + √(1/K² + 2·r·ln(u_s/u)·Δt)), right for steps in which the dry layer grows to many times what it was.
+ */
 export function findFront(body: Body, drying: Drying, stepS: number): void {
-  const { latentJ, fullLatentJ, boilingW, nodes, middleC } = body;
+  const { latentJ, fullLatentJ, nodes, middleC } = body;
   let front = drying.front;
   while (front < nodes - 1 && latentJ[front]! <= 0) front++;
   drying.front = front;
   let leftJ = 0;
-  let aheadJ = 0;
-  for (let i = 0; i < nodes; i++) {
-    leftJ += latentJ[i]!;
-    aheadJ += boilingW[i]! * stepS * 0.5;
-  }
+  for (let i = front; i < nodes; i++) leftJ += latentJ[i]!;
   drying.leftKg = leftJ / WATER_EVAPORATION_J_PER_KG;
-  let at = front;
-  while (at < nodes - 1 && aheadJ > latentJ[at]!) aheadJ -= latentJ[at++]!;
-  const dryShare = 1 - Math.max(0, latentJ[at]! - aheadJ) / fullLatentJ[at]!;
-  const layerPerM = drying.edgePerM[at]! + drying.cellPerM[at]! * dryShare;
-  const layerMPerS = layerPerM / (vapourConductivityKgPerMS(middleC[front]!) * drying.layerShare);
-  drying.conductanceKgPerS = 1 / (1 / drying.filmKgPerS + layerMPerS);
+  const frontC = Math.min(middleC[front]!, TANGENT_FROM_C);
+  const perM = 1 / (vapourConductivityKgPerMS(frontC) * drying.layerShare);
+  const dryShare = 1 - latentJ[front]! / fullLatentJ[front]!;
+  const cell = drying.cellPerM[front]! * perM;
+  const now = 1 / drying.filmKgPerS + drying.edgePerM[front]! * perM + cell * dryShare;
+  const growthPerKg = (cell * WATER_EVAPORATION_J_PER_KG) / fullLatentJ[front]!;
+  const drop = Math.max(0, -Math.log(1 - saturationPa(frontC) / ATMOSPHERE_PA) - drying.logU);
+  const then = Math.sqrt(now * now + 2 * growthPerKg * drop * stepS);
+  // The front comes to the far face at most.
+  const last = nodes - 1;
+  const deepest = 1 / drying.filmKgPerS + (drying.edgePerM[last]! + drying.cellPerM[last]!) * perM;
+  drying.conductanceKgPerS = 2 / (now + (then < deepest ? then : deepest));
 }
 
 /**
@@ -245,6 +254,7 @@ export function endStage(body: Body, drying: Drying, carry: number, beside: bool
     drying.oneHeld = !beside;
   } else {
     drying.twoKgPerS = beside ? kgPerS : 0;
+    drying.beside = beside;
     // On the plateau at the end, all that boiled is found from the heat of the whole step.
     if (!beside && drying.oneHeld) drying.oneKgPerS = 0;
   }
@@ -252,7 +262,8 @@ export function endStage(body: Body, drying: Drying, carry: number, beside: bool
 
 /**
  * Takes the step's vapour from the front inwards, and its heat from the front, where the stages had it taken. What a node
- * no longer holds comes from the next, so that a step may dry more than one. Water gone is left in `boilingW`, J.
+ * no longer holds comes from the next, so that a step may dry more than one; but not where the front went through the plateau,
+ * for then the second stage had it take the heat of its own water and no more. Water gone is left in `boilingW`, J.
  *
  * @param twoS weight of the second stage's flow, s
  */
@@ -264,7 +275,8 @@ export function evaporate(body: Body, drying: Drying, oneS: number, twoS: number
   // The last grains of water go with the rest.
   let dueJ = kg >= drying.leftKg * (1 - 1e-9) ? Infinity : kg * WATER_EVAPORATION_J_PER_KG;
   let takenJ = 0;
-  for (let i = drying.front; i < nodes && dueJ > 0; i++) {
+  const end = drying.beside ? nodes : drying.front + 1;
+  for (let i = drying.front; i < end && dueJ > 0; i++) {
     const goneJ = Math.min(latentJ[i]!, dueJ);
     const goneKg = goneJ / WATER_EVAPORATION_J_PER_KG;
     const belowC = WATER_BOILS_C - tempC[i]!;
