@@ -61,8 +61,6 @@ export interface Drying {
   twoKgPerS: number;
   /** The front was on the plateau in the first stage. */
   oneHeld: boolean;
-  /** It ended the step below the plateau. */
-  beside: boolean;
   /** Heat that the vapour did not take since it left below 100 °C, J: see `stored-heat.ts`. */
   sparedJ: number;
 }
@@ -108,7 +106,6 @@ export function dryingOf(properties: BodyProperties, grid: Grid): Drying | null 
     oneKgPerS: 0,
     twoKgPerS: 0,
     oneHeld: false,
-    beside: true,
     sparedJ: 0,
   };
 }
@@ -167,7 +164,12 @@ export function shareAir(bodies: readonly Body[], airKgPerS: number, roomU: numb
 export function beginStage(body: Body, drying: Drying, carry: number, stageS: number, stepS: number): void {
   const { tempC, rateCPerS } = body;
   const { front, leftKg } = drying;
-  const spentKg = carry === 0 ? 0 : (stepS - stageS) * drying.oneKgPerS;
+  if (carry === 0) {
+    drying.stageOneW = 0;
+    drying.oneKgPerS = 0;
+    drying.oneHeld = false;
+  }
+  const spentKg = (stepS - stageS) * drying.oneKgPerS;
   drying.mostKgPerS = carry === 0 ? leftKg / stepS : Math.max(0, leftKg - spentKg) / stageS;
   drying.lowC = -Infinity;
   drying.highC = Infinity;
@@ -231,6 +233,10 @@ export function aimsAnew(drying: Drying, stageC: number): boolean {
   return true;
 }
 
+/** Latent heat of what has evaporated below boiling over a time at the first stage's flow, J: the front's own water goes first. */
+export const spentAtFrontJ = (drying: Drying, overS: number): number =>
+  overS * drying.oneKgPerS * WATER_EVAPORATION_J_PER_KG;
+
 /** Heat that evaporation would take from a front on the plateau, W; the stage is then aimed there. */
 export function sinkAtBoilingW(drying: Drying): number {
   if (drying.aimC !== WATER_BOILS_C) aim(drying, WATER_BOILS_C);
@@ -254,7 +260,6 @@ export function endStage(body: Body, drying: Drying, carry: number, beside: bool
     drying.oneHeld = !beside;
   } else {
     drying.twoKgPerS = beside ? kgPerS : 0;
-    drying.beside = beside;
     // On the plateau at the end, all that boiled is found from the heat of the whole step.
     if (!beside && drying.oneHeld) drying.oneKgPerS = 0;
   }
@@ -262,8 +267,7 @@ export function endStage(body: Body, drying: Drying, carry: number, beside: bool
 
 /**
  * Takes the step's vapour from the front inwards, and its heat from the front, where the stages had it taken. What a node
- * no longer holds comes from the next, so that a step may dry more than one; but not where the front went through the plateau,
- * for then the second stage had it take the heat of its own water and no more. Water gone is left in `boilingW`, J.
+ * no longer holds comes from the next, so that a step may dry more than one. Water gone is left in `boilingW`, J.
  *
  * @param twoS weight of the second stage's flow, s
  */
@@ -275,8 +279,7 @@ export function evaporate(body: Body, drying: Drying, oneS: number, twoS: number
   // The last grains of water go with the rest.
   let dueJ = kg >= drying.leftKg * (1 - 1e-9) ? Infinity : kg * WATER_EVAPORATION_J_PER_KG;
   let takenJ = 0;
-  const end = drying.beside ? nodes : drying.front + 1;
-  for (let i = drying.front; i < end && dueJ > 0; i++) {
+  for (let i = drying.front; i < nodes && dueJ > 0; i++) {
     const goneJ = Math.min(latentJ[i]!, dueJ);
     const goneKg = goneJ / WATER_EVAPORATION_J_PER_KG;
     const belowC = WATER_BOILS_C - tempC[i]!;

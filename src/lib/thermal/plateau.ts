@@ -1,6 +1,6 @@
 import type { Body } from './body';
 import { WATER_BOILS_C } from './constants';
-import { aimsAnew, endStage, sinkAtBoilingW } from './drying';
+import { aimsAnew, endStage, sinkAtBoilingW, spentAtFrontJ } from './drying';
 
 /** A node of a wet body within a stage: on one side of the plateau, held on it, or through it and dry. */
 const BESIDE = 0;
@@ -31,6 +31,10 @@ export function eliminateWet(body: Body, carry: number, stageS: number): void {
       const warmingW = hold * (WATER_BOILS_C - tempC[i]!);
       hold = store[i]!;
       baseW = hold * WATER_BOILS_C - warmingW - latentJ[i]! / stageS;
+      if (i === front && drying !== null && !drying.oneHeld) {
+        const spentJ = Math.min(latentJ[i]!, spentAtFrontJ(drying, carry * stageS));
+        baseW += spentJ / stageS - carry * drying.stageOneW;
+      }
     }
     if (i === front && phase[i] === BESIDE && drying !== null) {
       hold += drying.slopeWPerK;
@@ -64,9 +68,18 @@ export function phasesChanged(body: Body, carry: number, stageS: number, flowsW:
     let now: number = BESIDE;
     if (phase[i] === HELD) {
       const takenW = flowsW[i]! + carry * stageOneW[i]!;
-      const boilingW = takenW - wetStore[i]! * (WATER_BOILS_C - tempC[i]!);
-      const leastW = front === null ? 0 : sinkAtBoilingW(front) + carry * front.stageOneW;
-      now = boilingW < leastW ? BESIDE : boilingW * stageS > leftJ ? THROUGH : HELD;
+      let boilingW = takenW - wetStore[i]! * (WATER_BOILS_C - tempC[i]!);
+      let mostJ = leftJ;
+      let beside = boilingW < 0;
+      if (front !== null) {
+        const vapourW = carry * front.stageOneW;
+        beside = boilingW - vapourW < sinkAtBoilingW(front);
+        if (!front.oneHeld) {
+          boilingW -= vapourW;
+          mostJ -= spentAtFrontJ(front, carry * stageS);
+        }
+      }
+      now = beside ? BESIDE : boilingW * stageS > mostJ ? THROUGH : HELD;
     } else if (phase[i] === THROUGH) now = stageC[i]! < WATER_BOILS_C ? HELD : THROUGH;
     else if (front !== null && aimsAnew(front, stageC[i]!)) changed = true;
     else now = stageC[i]! > WATER_BOILS_C ? HELD : BESIDE;
