@@ -5,7 +5,7 @@ import {
   WATER_EVAPORATION_J_PER_KG,
   WATER_HEAT_CAPACITY_J_PER_KG_K,
 } from './constants';
-import { beginStage, evaporate, findFront } from './drying';
+import { beginStage, evaporate, findFront, GAMMA } from './drying';
 import { reactionsRemain, warmWithReactions } from './enthalpy-walk';
 import { eliminateWet, settleDry } from './plateau';
 import { BIN_C, LAST_BIN, TABLE_FROM_C, temperatureAfter } from './property-table';
@@ -16,7 +16,7 @@ import { BIN_C, LAST_BIN, TABLE_FROM_C, temperatureAfter } from './property-tabl
  * the middle of the step, so both stages share one tridiagonal matrix; heat is then booked by the very fluxes of the
  * stages and temperature read from the enthalpy, so energy closes however strongly properties vary.
  */
-export const GAMMA = 1 - Math.SQRT1_2;
+export { GAMMA };
 /** Weight of the first stage's flux in the equation of the second. */
 export const CARRY = (1 - GAMMA) / GAMMA;
 

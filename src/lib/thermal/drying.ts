@@ -59,14 +59,26 @@ export interface Drying {
   stageOneW: number;
   oneKgPerS: number;
   twoKgPerS: number;
+  /** Latent heat of what each node has given to the first stage's evaporation, J. */
+  readonly goneJ: Float64Array;
+  /** Vapour at the temperature aimed at, kg/s. */
+  aimKgPerS: number;
   /** The front was on the plateau in the first stage. */
   oneHeld: boolean;
   /** Heat that the vapour did not take since it left below 100 °C, J: see `stored-heat.ts`. */
   sparedJ: number;
 }
 
+/** Phase of a node that is not on the plateau: see `plateau.ts`. */
+export const BESIDE = 0;
+/** Length of a stage over that of the step. */
+export const GAMMA = 1 - Math.SQRT1_2;
+
 /** Tangent of the saturation above it: at 100 °C the vapour would be all of the gas, and the plateau takes over. */
 const TANGENT_FROM_C = 99;
+/** And below it, where hardly anything evaporates and what is foreseen after a jolt may be no temperature at all. */
+const TANGENT_TO_C = -40;
+const knownC = (tempC: number): number => Math.min(Math.max(tempC, TANGENT_TO_C), TANGENT_FROM_C);
 /** Within how much of the foreseen temperature a stage must end, K. */
 const AIM_WITHIN_C = 0.3;
 
@@ -105,6 +117,8 @@ export function dryingOf(properties: BodyProperties, grid: Grid): Drying | null 
     stageOneW: 0,
     oneKgPerS: 0,
     twoKgPerS: 0,
+    goneJ: new Float64Array(nodes),
+    aimKgPerS: 0,
     oneHeld: false,
     sparedJ: 0,
   };
@@ -127,7 +141,7 @@ export function findFront(body: Body, drying: Drying, stepS: number): void {
   let leftJ = 0;
   for (let i = front; i < nodes; i++) leftJ += latentJ[i]!;
   drying.leftKg = leftJ / WATER_EVAPORATION_J_PER_KG;
-  const frontC = Math.min(middleC[front]!, TANGENT_FROM_C);
+  const frontC = knownC(middleC[front]!);
   const perM = 1 / (vapourConductivityKgPerMS(frontC) * drying.layerShare);
   const dryShare = 1 - latentJ[front]! / fullLatentJ[front]!;
   const cell = drying.cellPerM[front]! * perM;
@@ -170,6 +184,12 @@ export function beginStage(body: Body, drying: Drying, carry: number, stageS: nu
     drying.oneHeld = false;
   }
   const spentKg = (stepS - stageS) * drying.oneKgPerS;
+  let dueJ = drying.oneHeld ? 0 : spentKg * WATER_EVAPORATION_J_PER_KG;
+  for (let i = front; i < body.nodes; i++) {
+    const goneJ = Math.min(body.latentJ[i]!, dueJ);
+    drying.goneJ[i] = goneJ;
+    dueJ -= goneJ;
+  }
   drying.mostKgPerS = carry === 0 ? leftKg / stepS : Math.max(0, leftKg - spentKg) / stageS;
   drying.lowC = -Infinity;
   drying.highC = Infinity;
@@ -183,10 +203,11 @@ function aim(drying: Drying, atC: number): void {
   drying.aimC = atC;
   drying.sinkW = 0;
   drying.slopeWPerK = 0;
-  const knownC = atC < TANGENT_FROM_C ? atC : TANGENT_FROM_C;
-  const share = saturationPa(knownC) / ATMOSPHERE_PA;
-  const logSlope = (share / (1 - share)) * saturationGrowthPerK(knownC);
-  const logFront = logSlope * (atC - knownC) - Math.log(1 - share);
+  drying.aimKgPerS = 0;
+  const tangentC = knownC(atC);
+  const share = saturationPa(tangentC) / ATMOSPHERE_PA;
+  const logSlope = (share / (1 - share)) * saturationGrowthPerK(tangentC);
+  const logFront = logSlope * (atC - tangentC) - Math.log(1 - share);
   if (airKgPerS <= 0 || logFront <= Math.log(roomU)) return;
   const carried = airKgPerS / conductanceKgPerS;
   const taken = carried * Math.exp(logUAtFace(drying, logFront, carried));
@@ -196,6 +217,7 @@ function aim(drying: Drying, atC: number): void {
     kgPerS = mostKgPerS;
     slope = 0;
   }
+  drying.aimKgPerS = kgPerS;
   const heatJPerKg = evaporationJPerKg(atC);
   drying.sinkW = kgPerS * heatJPerKg;
   drying.slopeWPerK = slope * heatJPerKg - kgPerS * WATER_EVAPORATION_SLOPE_J_PER_KG_K;
@@ -233,9 +255,19 @@ export function aimsAnew(drying: Drying, stageC: number): boolean {
   return true;
 }
 
-/** Latent heat of what has evaporated below boiling over a time at the first stage's flow, J: the front's own water goes first. */
-export const spentAtFrontJ = (drying: Drying, overS: number): number =>
-  overS * drying.oneKgPerS * WATER_EVAPORATION_J_PER_KG;
+/**
+ * Limits the stage's evaporation to water that no plateau uses up at the same time.
+ *
+ * @param reachJ latent heat of that water
+ * @returns true if the stage must be solved again
+ */
+export function limitsAnew(drying: Drying, reachJ: number, carry: number, stageS: number): boolean {
+  const overS = carry === 0 ? stageS / GAMMA : stageS;
+  drying.mostKgPerS = Math.min(drying.mostKgPerS, reachJ / WATER_EVAPORATION_J_PER_KG / overS);
+  if (drying.aimKgPerS <= drying.mostKgPerS * (1 + 1e-9)) return false;
+  aim(drying, drying.aimC);
+  return true;
+}
 
 /** Heat that evaporation would take from a front on the plateau, W; the stage is then aimed there. */
 export function sinkAtBoilingW(drying: Drying): number {
@@ -272,22 +304,29 @@ export function endStage(body: Body, drying: Drying, carry: number, beside: bool
  * @param twoS weight of the second stage's flow, s
  */
 export function evaporate(body: Body, drying: Drying, oneS: number, twoS: number): void {
-  const { latentJ, boilingW, tempC, nodes } = body;
+  const { latentJ, boilingW, tempC, nodes, phase } = body;
+  const { front, goneJ, oneHeld, leftKg } = drying;
   boilingW.fill(0);
   const kg = oneS * drying.oneKgPerS + twoS * drying.twoKgPerS;
   if (kg <= 0) return;
+  let dueJ = (oneHeld ? kg : twoS * drying.twoKgPerS) * WATER_EVAPORATION_J_PER_KG;
   // The last grains of water go with the rest.
-  let dueJ = kg >= drying.leftKg * (1 - 1e-9) ? Infinity : kg * WATER_EVAPORATION_J_PER_KG;
+  if (kg >= leftKg * (1 - 1e-9)) dueJ = Infinity;
   let takenJ = 0;
-  for (let i = drying.front; i < nodes && dueJ > 0; i++) {
-    const goneJ = Math.min(latentJ[i]!, dueJ);
-    const goneKg = goneJ / WATER_EVAPORATION_J_PER_KG;
+  for (let i = front; i < nodes; i++) {
+    let outJ = oneHeld ? 0 : goneJ[i]!;
+    if (i === front || phase[i] === BESIDE) {
+      const moreJ = Math.min(latentJ[i]! - outJ, dueJ);
+      outJ += moreJ;
+      dueJ -= moreJ;
+    }
+    if (outJ <= 0) continue;
+    const outKg = outJ / WATER_EVAPORATION_J_PER_KG;
     const belowC = WATER_BOILS_C - tempC[i]!;
-    takenJ += goneJ + goneKg * WATER_EVAPORATION_SLOPE_J_PER_KG_K * belowC;
-    drying.sparedJ += goneKg * (WATER_HEAT_CAPACITY_J_PER_KG_K - WATER_EVAPORATION_SLOPE_J_PER_KG_K) * belowC;
-    latentJ[i] = latentJ[i]! - goneJ;
-    boilingW[i] = goneJ;
-    dueJ -= goneJ;
+    takenJ += outJ + outKg * WATER_EVAPORATION_SLOPE_J_PER_KG_K * belowC;
+    drying.sparedJ += outKg * (WATER_HEAT_CAPACITY_J_PER_KG_K - WATER_EVAPORATION_SLOPE_J_PER_KG_K) * belowC;
+    latentJ[i] = latentJ[i]! - outJ;
+    boilingW[i] = outJ;
   }
-  body.stageTwoW[drying.front] = body.stageTwoW[drying.front]! - takenJ / twoS;
+  body.stageTwoW[front] = body.stageTwoW[front]! - takenJ / twoS;
 }

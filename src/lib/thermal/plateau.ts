@@ -1,9 +1,8 @@
 import type { Body } from './body';
 import { WATER_BOILS_C } from './constants';
-import { aimsAnew, endStage, sinkAtBoilingW, spentAtFrontJ } from './drying';
+import { aimsAnew, BESIDE, endStage, limitsAnew, sinkAtBoilingW } from './drying';
 
 /** A node of a wet body within a stage: on one side of the plateau, held on it, or through it and dry. */
-const BESIDE = 0;
 const HELD = 1;
 const THROUGH = 2;
 
@@ -31,10 +30,8 @@ export function eliminateWet(body: Body, carry: number, stageS: number): void {
       const warmingW = hold * (WATER_BOILS_C - tempC[i]!);
       hold = store[i]!;
       baseW = hold * WATER_BOILS_C - warmingW - latentJ[i]! / stageS;
-      if (i === front && drying !== null && !drying.oneHeld) {
-        const spentJ = Math.min(latentJ[i]!, spentAtFrontJ(drying, carry * stageS));
-        baseW += spentJ / stageS - carry * drying.stageOneW;
-      }
+      if (drying !== null && i >= front) baseW += drying.goneJ[i]! / stageS;
+      if (i === front && drying !== null && !drying.oneHeld) baseW -= carry * drying.stageOneW;
     }
     if (i === front && phase[i] === BESIDE && drying !== null) {
       hold += drying.slopeWPerK;
@@ -61,6 +58,7 @@ export function eliminateWet(body: Body, carry: number, stageS: number): void {
 export function phasesChanged(body: Body, carry: number, stageS: number, flowsW: Float64Array): boolean {
   const { phase, latentJ, stageC, wetStore, tempC, stageOneW, drying } = body;
   let changed = false;
+  let reachJ = 0;
   for (let i = body.first; i < body.nodes; i++) {
     const leftJ = latentJ[i]!;
     if (leftJ <= 0) continue;
@@ -69,15 +67,12 @@ export function phasesChanged(body: Body, carry: number, stageS: number, flowsW:
     if (phase[i] === HELD) {
       const takenW = flowsW[i]! + carry * stageOneW[i]!;
       let boilingW = takenW - wetStore[i]! * (WATER_BOILS_C - tempC[i]!);
-      let mostJ = leftJ;
+      const mostJ = drying === null ? leftJ : leftJ - drying.goneJ[i]!;
       let beside = boilingW < 0;
       if (front !== null) {
         const vapourW = carry * front.stageOneW;
         beside = boilingW - vapourW < sinkAtBoilingW(front);
-        if (!front.oneHeld) {
-          boilingW -= vapourW;
-          mostJ -= spentAtFrontJ(front, carry * stageS);
-        }
+        if (!front.oneHeld) boilingW -= vapourW;
       }
       now = beside ? BESIDE : boilingW * stageS > mostJ ? THROUGH : HELD;
     } else if (phase[i] === THROUGH) now = stageC[i]! < WATER_BOILS_C ? HELD : THROUGH;
@@ -87,6 +82,10 @@ export function phasesChanged(body: Body, carry: number, stageS: number, flowsW:
       phase[i] = now;
       changed = true;
     }
+    if (drying !== null && (front !== null || now === BESIDE)) reachJ += leftJ - drying.goneJ[i]!;
+  }
+  if (drying !== null && phase[drying.front] === BESIDE) {
+    if (limitsAnew(drying, reachJ, carry, stageS)) changed = true;
   }
   return changed;
 }
