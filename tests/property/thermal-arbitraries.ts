@@ -82,6 +82,15 @@ const segment = fc.record({
   vent: fc.constantFrom('open', 'closed'),
 });
 
+/** The same loads, with moulds that hold water that a scale shows: real numbers are drawn by size, and most are next to nothing. */
+export const wetLoads: fc.Arbitrary<Load> = fc
+  .tuple(loads, fc.array(fc.integer({ min: 10, max: 2000 }), { minLength: 4, maxLength: 4 }))
+  .filter(([{ moulds }]) => moulds.length > 0)
+  .map(([load, grams]) => ({
+    ...load,
+    moulds: load.moulds.map((mould, i) => ({ ...mould, waterKg: (grams[i] ?? 0) / 1000 })),
+  }));
+
 /** Firings of one to five segments from room temperature, in any order of heating and cooling. */
 export const profiles: fc.Arbitrary<Profile> = fc
   .array(segment, { minLength: 1, maxLength: 5 })

@@ -72,7 +72,9 @@ export function slab(figures: {
     face: { kind: 'film', convectionWPerM2K: figures.filmWPerM2K, exchangeFactor: figures.exchange ?? 0 },
     far: { kind: 'insulated' },
     startC: figures.startC,
-    water: figures.waterKgPerM3 ? { kgPerM3: figures.waterKgPerM3, addedConductivityWPerMK: 0 } : null,
+    water: figures.waterKgPerM3
+      ? { kgPerM3: figures.waterKgPerM3, addedConductivityWPerMK: 0, dryLayerShare: 0.2 }
+      : null,
     reactions: [],
     count: 1,
   };

@@ -21,6 +21,7 @@ const NAMES: Readonly<Record<string, string>> = {
   pushesAboveM: 'Pushes on the mould above a thickness of',
   emissivity: 'Emissivity',
   porosityShare: 'Porosity',
+  tortuosity: 'Tortuosity of the pores',
   permeabilityM2: 'Permeability',
   maxC: 'Highest temperature',
   maxWithCarbonC: 'Highest temperature with carbon left',

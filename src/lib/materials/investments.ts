@@ -30,6 +30,7 @@ const gypsumCommon = {
   wetConductivityWPerMK: constant(0.75, 'W/(m·K)', `${HANDBOOK}: 0.6-0.9 wet`, 'memory'),
   heatCapacityJPerKgK: constant(1050, 'J/(kg·K)', `${HANDBOOK}: 1000-1100`, 'memory'),
   porosityShare: constant(0.55, '1', 'From its density and that of its powder', 'derived'),
+  tortuosity: constant(3, '1', 'Vapour in porous ceramics: 2-4, handbook, recalled', 'memory'),
   maxC: constant(788, '°C', `${CHECKLIST}: work at 732-760 °C, do not exceed 788 °C (1450 °F)`, 'published'),
   maxWithCarbonC: constant(
     700,
@@ -92,6 +93,7 @@ export const investments: MouldMaterial[] = [
       wetConductivityWPerMK: constant(1.0, 'W/(m·K)', HANDBOOK, 'memory'),
       heatCapacityJPerKgK: constant(1050, 'J/(kg·K)', HANDBOOK, 'memory'),
       porosityShare: constant(0.3, '1', HANDBOOK, 'memory'),
+      tortuosity: constant(3, '1', 'Vapour in porous ceramics: 2-4, handbook, recalled', 'memory'),
       maxC: constant(1000, '°C', `${PHILLIPS}: burned out at 800-900 °C`, 'memory'),
       greenStrengthPa: constant(3e6, 'Pa', HANDBOOK, 'memory'),
       firedStrengthPa: constant(4e6, 'Pa', HANDBOOK, 'memory'),

@@ -154,6 +154,8 @@ export const mouldMaterialSchema = z.strictObject({
     heatCapacityJPerKgK: propertySchema,
     emissivity: propertySchema,
     porosityShare: propertySchema,
+    /** How much longer the way of vapour through its pores is, and narrower: free diffusivity × porosity over it. */
+    tortuosity: propertySchema,
     permeabilityM2: propertySchema.optional(),
     maxC: propertySchema,
     /** Above it, carbon left in a gypsum mould breaks the binder down and gives off sulphur dioxide. */

@@ -29,6 +29,7 @@ const shellCommon = {
     `${XU_2016}: 10-30 % in steel foundries; 25-35 % usual by hand`,
     'published',
   ),
+  tortuosity: constant(3, '1', 'Vapour in porous ceramics: 2-4, handbook, recalled', 'memory'),
   permeabilityM2: constant(2e-14, 'm²', `${HANDBOOK}: 1e-15 to 1e-13, weak`, 'memory'),
   greenStrengthPa: constant(3.5e6, 'Pa', `${JONES_YUAN}: modulus of rupture 2-6 MPa dry`, 'memory'),
   wetStrengthShare: constant(

@@ -5,6 +5,7 @@ import {
   WATER_EVAPORATION_J_PER_KG,
   WATER_HEAT_CAPACITY_J_PER_KG_K,
 } from './constants';
+import { beginStage, evaporate, findFront, GAMMA } from './drying';
 import { reactionsRemain, warmWithReactions } from './enthalpy-walk';
 import { eliminateWet, settleDry } from './plateau';
 import { BIN_C, LAST_BIN, TABLE_FROM_C, temperatureAfter } from './property-table';
@@ -15,7 +16,7 @@ import { BIN_C, LAST_BIN, TABLE_FROM_C, temperatureAfter } from './property-tabl
  * the middle of the step, so both stages share one tridiagonal matrix; heat is then booked by the very fluxes of the
  * stages and temperature read from the enthalpy, so energy closes however strongly properties vary.
  */
-export const GAMMA = 1 - Math.SQRT1_2;
+export { GAMMA };
 /** Weight of the first stage's flux in the equation of the second. */
 export const CARRY = (1 - GAMMA) / GAMMA;
 
@@ -26,6 +27,7 @@ export function prepareBody(body: Body, stepS: number, lastS: number, chamberMid
   foresee(body, stepS, lastS, chamberMiddleC);
   setLinks(body, stepS, chamberMiddleC);
   setStores(body, 1 / (GAMMA * stepS));
+  if (body.wet && body.drying !== null) findFront(body, body.drying, stepS);
 }
 
 /** Temperatures of the middle of the step, from the rates of the last two: T + Δt/2·(rate + bend·(Δt_last/2 + Δt/4)). */
@@ -105,6 +107,7 @@ function setStores(body: Body, perS: number): void {
  */
 export function eliminate(body: Body, carry: number, stageS: number): void {
   if (body.wet) {
+    if (body.drying !== null) beginStage(body, body.drying, carry, stageS, stageS / GAMMA);
     eliminateWet(body, carry, stageS);
     return;
   }
@@ -183,6 +186,7 @@ export function commitBody(body: Body, stepS: number, perBendS: number): void {
   const twoS = GAMMA * stepS;
   const perS = 1 / stepS;
   const special = body.wet || body.reacting;
+  if (body.wet && body.drying !== null) evaporate(body, body.drying, oneS, twoS);
   for (let i = first; i < nodes; i++) {
     const heatJ = oneS * stageOneW[i]! + twoS * stageTwoW[i]!;
     const fromC = tempC[i]!;
@@ -190,7 +194,8 @@ export function commitBody(body: Body, stepS: number, perBendS: number): void {
     if (special) {
       const wasJ = body.latentJ[i]!;
       toC = warmWithReactions(body, i, heatJ);
-      body.boilingW[i] = (wasJ - body.latentJ[i]!) * perS;
+      const vapourJ = body.drying === null ? 0 : body.boilingW[i]!;
+      body.boilingW[i] = (vapourJ + wasJ - body.latentJ[i]!) * perS;
     } else {
       const bin = ((fromC - TABLE_FROM_C) * PER_BIN) | 0;
       const lowC = TABLE_FROM_C + bin * BIN_C;

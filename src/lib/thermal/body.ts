@@ -1,4 +1,5 @@
 import { WATER_EVAPORATION_J_PER_KG } from './constants';
+import { type Drying, dryingOf } from './drying';
 import { farAreaM2, gridOf, type Grid } from './grid';
 import type { BodyProperties } from './properties';
 import { BIN_COUNT, capacityTable, edgeTable, reactionTable } from './property-table';
@@ -34,6 +35,8 @@ export interface Body {
   /** Heat that the water of each node needs to evaporate, J, when all of it is there. */
   readonly fullLatentJ: Float64Array;
   readonly wetWPerMK: number;
+  /** How it dries below boiling; null: it never held water. */
+  readonly drying: Drying | null;
 
   // State
   readonly tempC: Float64Array;
@@ -44,7 +47,7 @@ export interface Body {
   /** Highest temperature each node has been at, °C: reactions run once. */
   readonly peakC: Float64Array;
   readonly latentJ: Float64Array;
-  /** Mean heat that evaporated water over the last step, W. */
+  /** Mean latent heat of the water that left each node over the last step, W. */
   readonly boilingW: Float64Array;
   wet: boolean;
   /** Some node has not yet been through all reactions. */
@@ -138,6 +141,7 @@ export function bodyOf(properties: BodyProperties): Body {
       properties.far.kind === 'room' ? new RoomFilm(properties.far.ambientC, properties.far.film) : null,
     fullLatentJ,
     wetWPerMK: properties.water?.addedConductivityWPerMK ?? 0,
+    drying: dryingOf(properties, grid),
     tempC: zeros().fill(properties.startC),
     rateCPerS: zeros(),
     bendCPerS2: zeros(),

@@ -2,7 +2,8 @@ import type { Body } from './body';
 import { CARRY, commitBody, eliminate, GAMMA, prepareBody, substitute, substituteLast } from './body-step';
 import type { Chamber } from './chamber';
 import { meanAirHeatCapacityJPerKgK } from './air';
-import { phasesChanged } from './plateau';
+import { shareAir } from './drying';
+import { eliminateWet, keepVapour, phasesChanged } from './plateau';
 import { binOf, integralBetween, temperatureAfter } from './property-table';
 
 const MOST_ROUNDS = 12;
@@ -88,7 +89,12 @@ export function takeStep(chamber: Chamber, afterCorner = false): void {
 
 function prepare(chamber: Chamber, stepS: number, middleC: number): void {
   chamber.ventWPerK = chamber.airKgPerS * meanAirHeatCapacityJPerKgK(middleC);
-  for (const body of chamber.bodies) prepareBody(body, stepS, chamber.lastS, middleC);
+  let wet = false;
+  for (const body of chamber.bodies) {
+    prepareBody(body, stepS, chamber.lastS, middleC);
+    if (body.wet) wet = true;
+  }
+  if (wet) shareAir(chamber.bodies, chamber.airKgPerS, chamber.roomU);
 }
 
 function finish(chamber: Chamber, stepS: number, middleC: number): void {
@@ -102,7 +108,8 @@ function finish(chamber: Chamber, stepS: number, middleC: number): void {
 
 /**
  * Solves one stage of all bodies, with the chamber's temperature known or found from its balance.
- * Wet bodies are solved again until every node is on the right side of its boiling plateau.
+ * Wet bodies are solved again until every node is on the right side of its boiling plateau and their fronts evaporate as their
+ * temperature has it.
  *
  * @param store heat capacity of the node over the length of the stage, W/K; only where the temperature is to be found
  * @returns the chamber's temperature at the end of the stage, °C
@@ -124,14 +131,17 @@ function solveStage(
       if (!body.wet) continue;
       settle(body, chamberC, carry, stageS, chamber.lastS);
       if (phasesChanged(body, carry, stageS, carry === 0 ? body.stageOneW : body.stageTwoW)) {
-        eliminate(body, carry, stageS);
+        eliminateWet(body, carry, stageS);
         changed = true;
       }
     }
     if (!changed) break;
     chamberC = knownC ?? balanceC(chamber, carry, store, heatW);
   }
-  for (const body of bodies) settle(body, chamberC, carry, stageS, chamber.lastS);
+  for (const body of bodies) {
+    settle(body, chamberC, carry, stageS, chamber.lastS);
+    if (body.wet) keepVapour(body, carry);
+  }
   return chamberC;
 }
 

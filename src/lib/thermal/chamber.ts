@@ -1,4 +1,5 @@
 import type { Body } from './body';
+import { ROOM_HUMIDITY_SHARE, totalOverAir } from './humid-air';
 import { BIN_COUNT } from './property-table';
 
 /** How heat comes in: what the chamber gets at full fire, and what is paid for each watt of it, by chamber temperature. */
@@ -15,6 +16,8 @@ export interface Chamber {
   readonly bodies: readonly Body[];
   readonly firing: Firing;
   readonly ambientC: number;
+  /** Total over air pressure of the room's moist air. */
+  readonly roomU: number;
   /** Heat capacity of the node by bin of temperature, J/K. */
   readonly capacity: Float64Array;
   tempC: number;
@@ -84,6 +87,7 @@ export function chamberOf(
     bodies,
     firing,
     ambientC: settings.ambientC,
+    roomU: totalOverAir(settings.ambientC, ROOM_HUMIDITY_SHARE),
     capacity,
     tempC: settings.startC,
     rateCPerS: 0,

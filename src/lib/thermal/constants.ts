@@ -9,6 +9,8 @@ export const GRAVITY_M_PER_S2 = 9.80665;
 export const WATER_BOILS_C = 100;
 /** Heat of evaporation of water at 100 °C, J/kg. Steam tables (IAPWS-95), recalled: 2256.5 kJ/kg. */
 export const WATER_EVAPORATION_J_PER_KG = 2256.5e3;
+/** What evaporation needs more for each kelvin below 100 °C, J/(kg·K). Steam tables, recalled: (2441.7 − 2256.5) / 75 kJ/(kg·K). */
+export const WATER_EVAPORATION_SLOPE_J_PER_KG_K = 2470;
 /** Heat capacity of liquid water, mean of 20-100 °C, J/(kg·K). Steam tables, recalled: (419.1 − 83.9) / 80 kJ/(kg·K). */
 export const WATER_HEAT_CAPACITY_J_PER_KG_K = 4190;
 /** Density of air at 20 °C and one atmosphere, kg/m³. Ideal gas, 28.96 g/mol. */

@@ -16,11 +16,13 @@ export interface ReactionProperties {
   heatJPerM3: number;
 }
 
-/** Free water spread evenly through a body: it holds each depth at 100 °C until that depth is dry. */
+/** Free water spread evenly through a body: it evaporates from a front that recedes, and holds each depth at 100 °C until that depth is dry. */
 export interface WaterProperties {
   kgPerM3: number;
   /** What the water adds to the conductivity while all of it is there, W/(m·K). */
   addedConductivityWPerMK: number;
+  /** Diffusivity of vapour in the dry layer over that in free air, 0-1: porosity over tortuosity. */
+  dryLayerShare: number;
 }
 
 /**

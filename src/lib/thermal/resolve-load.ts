@@ -119,6 +119,9 @@ export function mouldBody(mould: Mould, around: Surroundings): BodyProperties {
   };
 }
 
+/** Water that no scale shows beside the mould: less, and it is dry. */
+const NO_WATER_SHARE = 1e-6;
+
 /** Free water; a mould that goes in at 100 °C or more has none left. */
 function waterOf(
   mould: Mould,
@@ -126,7 +129,7 @@ function waterOf(
   densityKgPerM3: number,
   startC: number,
 ): BodyProperties['water'] {
-  if (mould.waterKg <= 0 || startC >= 100) return null;
+  if (mould.waterKg <= NO_WATER_SHARE * mould.massKg || startC >= 100) return null;
   const dry = read.number('conductivityWPerMK') ?? 0;
   const wet = read.number('wetConductivityWPerMK') ?? dry;
   const freshKg = (read.number('freshWaterShare') ?? 0) * mould.massKg;
@@ -134,6 +137,7 @@ function waterOf(
   return {
     kgPerM3: (mould.waterKg / mould.massKg) * densityKgPerM3,
     addedConductivityWPerMK: Math.max(0, wet - dry) * wetness,
+    dryLayerShare: (read.number('porosityShare') ?? 1) / (read.number('tortuosity') ?? 1),
   };
 }
 

@@ -61,7 +61,7 @@ export interface EnergySplit {
   /** Given to the room by the outer face, and up the flue. */
   lossesKWh: number;
   ventKWh: number;
-  /** Taken by evaporating water and by the mould's reactions. */
+  /** Taken by evaporating water, at boiling or below, and by the mould's reactions. */
   reactionsKWh: number;
   /** Released in the chamber by the burning pattern. */
   patternKWh: number;

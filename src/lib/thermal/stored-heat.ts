@@ -38,13 +38,14 @@ function bodyHeatJ(body: Body, startC: Float64Array): { storedJ: number; takenJ:
     takenJ +=
       goneKg * (WATER_EVAPORATION_J_PER_KG + WATER_HEAT_CAPACITY_J_PER_KG_K * (WATER_BOILS_C - fromC));
   }
+  if (body.drying !== null) takenJ -= body.drying.sparedJ;
   return { storedJ, takenJ };
 }
 
 /**
  * Where the energy of a firing went since a snapshot at its start. Stored heat is read off the temperatures as they
  * are now, lost heat was summed up on the way, so the imbalance is a check of the solver and not an identity.
- * Water that has left counts as heat taken: warmed to 100 °C and evaporated.
+ * Water that has left counts as heat taken: warmed and evaporated, at 100 °C or below, where its vapour leaves with less.
  */
 export function energySplit(model: FiringModel, start: HeatSnapshot): EnergySplit {
   const { chamber, lining } = model;

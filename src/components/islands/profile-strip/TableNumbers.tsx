@@ -23,6 +23,7 @@ const NAMES: Readonly<Record<string, string>> = {
   pushesAboveM: 'Pushes on the mould above',
   emissivity: 'Emissivity',
   porosityShare: 'Porosity',
+  tortuosity: 'Tortuosity of the pores',
   permeabilityM2: 'Permeability',
   maxC: 'Highest temperature',
   maxWithCarbonC: 'Highest with carbon left',
