@@ -33,6 +33,7 @@ export function castingStep(needs: DraftNeeds): DraftStep | null {
   const solidusC = load.pour.alloy?.solidusC ?? (metal ? valueAt(metal.properties.solidusC, 20) : Infinity);
   const maxC = lowest(moulds.map(({ figure }) => figure('maxC')))?.value ?? 1200;
   const carbonC = lowest(moulds.map(({ figure }) => figure('maxWithCarbonC')))?.value ?? Infinity;
+  const cristobaliteC = lowest(moulds.map(({ figure }) => figure('cristobaliteFromC')))?.value ?? Infinity;
   const highC = Math.max(
     LEAST_C,
     Math.min(
@@ -40,6 +41,7 @@ export function castingStep(needs: DraftNeeds): DraftStep | null {
       maxC - 30,
       kiln.maxC - 15,
       carbonC - 15,
+      cristobaliteC - 20,
     ),
   );
   const usual = usualMouldC(needs);
