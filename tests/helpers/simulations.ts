@@ -14,6 +14,7 @@ export interface MouldStory {
   waterKg?: OfTime;
   patternLeftShare?: OfTime;
   heatWorkH?: OfTime;
+  gasGPerMin?: OfTime;
 }
 
 export interface SimulationStory {
@@ -78,7 +79,7 @@ export function toldSimulation(story: SimulationStory): Simulation {
       coreC: series(told.coreC ?? surfaceC),
       waterKg: series(told.waterKg ?? (() => 0)),
       patternLeftShare: series(told.patternLeftShare ?? (() => 0)),
-      gasGPerMin: series(() => 0),
+      gasGPerMin: series(told.gasGPerMin ?? (() => 0)),
       gradientKPerM: series(() => 0),
       maxRateCPerH: series(() => 0),
       heatWorkH: series(told.heatWorkH ?? (() => 1)),

@@ -58,6 +58,11 @@ const CALLS: readonly Call[] = [
   { call: 'POST /api/tariffs', may: 'ot', body: BODIES.tariff },
   { call: 'GET /api/tariffs/{tariffId}', may: 'ote' },
   { call: 'PATCH /api/tariffs/{tariffId}', may: 'ot', body: { note: 'x' } },
+  {
+    call: 'POST /api/drafts',
+    may: 'ote',
+    body: { load: { moulds: [{ material: 'fused-silica-shell', massKg: 1 }] }, kilnId: world.kilnId },
+  },
   { call: 'POST /api/estimates', may: 'ote', body: { profile: BODIES.profile, kilnId: world.kilnId } },
   { call: 'GET /api/profiles', may: 'otes' },
   { call: 'POST /api/profiles', may: 'otes', body: { name: 'Own', profile: BODIES.profile } },

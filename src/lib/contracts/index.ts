@@ -1,5 +1,6 @@
 import { authRoutes } from './auth';
 import { classRoutes, handoutRoutes, peopleRoutes } from './classes';
+import { draftRoutes } from './drafts';
 import { furnaceRoutes, kilnRoutes, tariffRoutes, thermocoupleRoutes } from './equipment';
 import { logRoutes } from './logs';
 import { materialRoutes } from './materials';
@@ -20,6 +21,7 @@ export const routes = {
   materials: materialRoutes,
   profiles: profileRoutes,
   estimates: estimateRoutes,
+  drafts: draftRoutes,
   classes: classRoutes,
   handouts: handoutRoutes,
   runs: runRoutes,

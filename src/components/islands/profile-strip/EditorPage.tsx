@@ -1,5 +1,6 @@
 import { useCallback, useMemo, useState, useSyncExternalStore } from 'react';
 import { useUnits } from '~/lib/client/units';
+import type { DraftedProfile } from '~/lib/contracts/drafts';
 import type { Version } from '~/lib/contracts/profiles';
 import { plannedCurve } from '~/lib/profile/planned';
 import { SAFETY_NOTES, safetyNotesFor } from '~/lib/profile/safety';
@@ -9,6 +10,7 @@ import { nextClockHour } from '../strip/clock';
 import { Actions } from './Actions';
 import { Cautions } from './Cautions';
 import { Conflict } from './Conflict';
+import { DraftPanel, DraftReasons } from './DraftPanel';
 import { kilnRampsOf } from './document';
 import { EditorHeader, type Panel } from './EditorHeader';
 import { useEstimates } from './estimate-work';
@@ -22,6 +24,7 @@ import { LoadPanel } from './LoadPanel';
 import { modelOf } from './model';
 import { permissionsFor } from './permissions';
 import { ProfileStrip } from './ProfileStrip';
+import { Outcome } from './Outcome';
 import type { ProfileEditorProps } from './props';
 import { Returned, remarksOf } from './Returned';
 import { SaveLine } from './SaveLine';
@@ -107,6 +110,7 @@ export function EditorPage(props: ProfileEditorProps) {
   const planned = useMemo(() => plannedCurve(document.profile, kilnRampsS), [document.profile, kilnRampsS]);
   const [shown, toggle] = useLayers();
   const [panel, setPanel] = useState<Panel>(null);
+  const [drafted, setDrafted] = useState<DraftedProfile | null>(null);
   const [pointed, setPointed] = useState<Caution | null>(null);
   const onVersion = (next: Version): void => {
     keeping.adoptVersion(next);
@@ -195,6 +199,17 @@ export function EditorPage(props: ProfileEditorProps) {
               />
             )}
           </fieldset>
+          {readOnly || panel !== 'load' ? null : (
+            <DraftPanel
+              kilnId={document.kilnId}
+              load={document.load}
+              onUse={(profile, draft) => {
+                editor.changeProfile(profile, undefined, 0);
+                setDrafted(draft);
+                setPanel(null);
+              }}
+            />
+          )}
         </section>
       )}
       <div className="editor-bar">
@@ -221,6 +236,13 @@ export function EditorPage(props: ProfileEditorProps) {
         <section className="editor-cautions" aria-label="Cautions">
           <Cautions cautions={estimate.cautions} onPoint={setPointed} onGoTo={goTo} />
         </section>
+      ) : null}
+      {estimate ? <Outcome estimate={estimate} load={document.load} startMs={startMs} zone={zone} /> : null}
+      {drafted ? (
+        <details className="draft-why">
+          <summary>Why the draft was made so</summary>
+          <DraftReasons draft={drafted} />
+        </details>
       ) : null}
       <div className="editor-foot">
         <Actions

@@ -17,7 +17,7 @@ interface FiguresProps {
 }
 
 const CURRENCY_SIGNS: Readonly<Record<string, string>> = { EUR: '€', GBP: '£', USD: '$' };
-const moneyText = (money: { amount: string; currency: string }): string =>
+export const moneyText = (money: { amount: string; currency: string }): string =>
   `${CURRENCY_SIGNS[money.currency] ?? money.currency} ${money.amount}`;
 
 /** By how much a figure moved with the last change, or nothing where it did not. */
@@ -60,7 +60,7 @@ function Hours({ seconds }: { readonly seconds: number }) {
 }
 
 /** A moment on the studio's clock, with its day where that is not the day of the start. */
-function momentText(atS: number, startMs: number | null, zone: string): string {
+export function momentText(atS: number, startMs: number | null, zone: string): string {
   if (startMs === null) return `+${durationText(atS)}`;
   const atMs = startMs + atS * 1000;
   const day = shortDay(atMs, zone);

@@ -1,14 +1,13 @@
 import { useUnits } from '~/lib/client/units';
 import type { Furnace } from '~/lib/contracts/equipment';
 import { findMaterial, materials } from '~/lib/materials';
-import type { Load } from '~/lib/thermal/load-schema';
+import type { Pour } from '~/lib/thermal/load-schema';
 import { formatDuration, formatTemperature, parseDuration, parseTemperature } from '~/lib/units';
+import { ChargeFields } from './ChargeFields';
 import { Choice } from './Labelled';
 import { AmountField, type Put } from './MouldFields';
 import { between } from './parse-amounts';
 import { QuantityInput } from './QuantityInput';
-
-type Pour = NonNullable<Load['pour']>;
 
 const metalOptions = [
   { value: '', text: 'No pour from this firing' },
@@ -47,50 +46,67 @@ export function PourFields(props: {
       });
   };
   return (
-    <div className="load-grid">
-      <Choice label="Metal" value={pour?.metal ?? ''} options={metalOptions} onChange={chooseMetal} />
-      {pour ? (
-        <>
-          <AmountField
-            label="Charge"
-            kind="mass"
-            value={pour.chargeKg}
-            low={1e-3}
-            high={10000}
-            onCommit={(chargeKg) => put({ chargeKg }, 'charge')}
-          />
-          <QuantityInput
-            boxed
-            label="Poured at"
-            text={formatTemperature(pour.pourC, units.temperature)}
-            parse={between(
-              (typed) => parseTemperature(typed, units.temperature),
-              100,
-              1800,
-              (tempC) => formatTemperature(tempC, units.temperature),
+    <>
+      <div className="load-grid">
+        <Choice label="Metal" value={pour?.metal ?? ''} options={metalOptions} onChange={chooseMetal} />
+        {pour ? (
+          <>
+            {pour.charge ? null : (
+              <AmountField
+                label="Charge"
+                kind="mass"
+                value={pour.chargeKg}
+                low={1e-3}
+                high={10000}
+                onCommit={(chargeKg) => put({ chargeKg }, 'charge')}
+              />
             )}
-            understood={(tempC) => formatTemperature(tempC, units.temperature)}
-            onCommit={(pourC) => put({ pourC }, 'pourC')}
-          />
-          <QuantityInput
-            boxed
-            label="Carried for"
-            text={formatDuration(pour.carryS)}
-            parse={between((typed) => parseDuration(typed, 'min'), 0, 3600, formatDuration)}
-            understood={formatDuration}
-            onCommit={(carryS) => put({ carryS }, 'carry')}
-          />
-          <Choice
-            label="Furnace"
-            value={pour.furnaceId ?? ''}
-            options={[
-              { value: '', text: 'Not chosen' },
-              ...furnaces.map((furnace) => ({ value: furnace.id, text: furnace.name })),
-            ]}
-            onChange={(id) => put({ furnaceId: id === '' ? null : id })}
-          />
-        </>
-      ) : null}
-    </div>
+            <QuantityInput
+              boxed
+              label="Poured at"
+              text={formatTemperature(pour.pourC, units.temperature)}
+              parse={between(
+                (typed) => parseTemperature(typed, units.temperature),
+                100,
+                1800,
+                (tempC) => formatTemperature(tempC, units.temperature),
+              )}
+              understood={(tempC) => formatTemperature(tempC, units.temperature)}
+              onCommit={(pourC) => put({ pourC }, 'pourC')}
+            />
+            <QuantityInput
+              boxed
+              label="Carried for"
+              text={formatDuration(pour.carryS)}
+              parse={between((typed) => parseDuration(typed, 'min'), 0, 3600, formatDuration)}
+              understood={formatDuration}
+              onCommit={(carryS) => put({ carryS }, 'carry')}
+            />
+            <Choice
+              label="Furnace"
+              value={pour.furnaceId ?? ''}
+              options={[
+                { value: '', text: 'Not chosen' },
+                ...furnaces.map((furnace) => ({ value: furnace.id, text: furnace.name })),
+              ]}
+              onChange={(id) => put({ furnaceId: id === '' ? null : id })}
+            />
+            <AmountField
+              label="Crucible"
+              kind="mass"
+              value={pour.crucibleKg ?? null}
+              low={0}
+              high={2000}
+              onCommit={(crucibleKg) => put({ crucibleKg }, 'crucible')}
+              onClear={() => {
+                const { crucibleKg: _before, ...rest } = pour;
+                onChange(rest);
+              }}
+            />
+          </>
+        ) : null}
+      </div>
+      {pour ? <ChargeFields pour={pour} onChange={onChange} /> : null}
+    </>
   );
 }

@@ -9,6 +9,8 @@ import './typing.css';
 import './cards.css';
 import './upright.css';
 import './cautions.css';
+import './draft.css';
+import './outcome.css';
 import './load.css';
 import './dialogs.css';
 import './conflict.css';

@@ -91,6 +91,7 @@ export const ACCESS: readonly AccessRule[] = [
 
   // ---------------------------------------------------------------- profiles
   api('/estimates', { POST: EVERY_ROLE }),
+  api('/drafts', { POST: EVERY_ROLE }),
   api('/profiles', { GET: EVERY_ROLE, POST: EVERY_ROLE }),
   api('/profiles/[id]', { GET: EVERY_ROLE, PATCH: EVERY_ROLE }),
   api('/profiles/[id]/duplicate', { POST: EVERY_ROLE }),

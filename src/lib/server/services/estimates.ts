@@ -43,14 +43,13 @@ export async function estimateFiring(
   requireComputable(request.profile, plate, load, query);
   const kilnPlan = await planFor(actor, request, kiln, plate);
   const startMs = request.startAt === undefined ? null : Date.parse(request.startAt);
-  const furnace = await pouringFurnace(actor, load);
-  const context = { ...(await contextOf(actor, kiln, startMs)), furnace };
+  const context = await cautionContext(actor, kiln, load, startMs);
   const simulation = simulated({ profile: request.profile, kiln: plate, load, ambientC: request.ambientC });
   const found = forecastOf(simulation, {
     mouldIndex: query.mould ?? null,
     context,
     kilnPlan,
-    furnacePlan: (await tariffFor(actor, furnace?.tariffId ?? null))?.plan ?? null,
+    furnacePlan: (await tariffFor(actor, context.furnace?.tariffId ?? null))?.plan ?? null,
     pricedFromMs: startMs ?? now.getTime(),
   });
   return isOnlyStudent(actor) ? withoutMoney(found) : found;
@@ -96,17 +95,18 @@ export async function versionCautions(
   const kiln = await kilnFor(actor, content.kilnId, tx);
   const load = content.load ?? loadSchema.parse({});
   const simulation = simulated({ profile: content.profile, kiln: plateOf(kiln), load, ambientC: ROOM_C });
-  const context = await contextOf(actor, kiln, null, tx);
-  return cautionsOf(simulation, { ...context, furnace: await pouringFurnace(actor, load, tx) });
+  return cautionsOf(simulation, await cautionContext(actor, kiln, load, null, tx));
 }
 
-/** What the rules go by besides the curves: the studio's hours, zone and units, and the kiln's thermocouple. */
-async function contextOf(
-  { studioId }: Actor,
-  { thermocoupleId }: Links,
+/** What the rules go by besides the curves: the studio's hours, zone and units, the kiln's thermocouple, the pour's furnace. */
+export async function cautionContext(
+  actor: Actor,
+  { thermocoupleId }: Pick<Links, 'thermocoupleId'>,
+  load: Load,
   startMs: number | null,
   tx?: Tx,
-): Promise<CautionContext> {
+): Promise<CautionContext & { furnace: Furnace | null }> {
+  const { studioId } = actor;
   const rules = await studioRules(studioId, tx);
   const thermocouple = thermocoupleId ? await thermocouples.find(studioId, thermocoupleId, tx) : null;
   return {
@@ -114,6 +114,7 @@ async function contextOf(
     offsetMinutesAt: zoneOffset(rules.timeZone),
     attendedHours: { fromMinute: rules.attendedFromMinute, toMinute: rules.attendedUntilMinute },
     thermocouple,
+    furnace: await pouringFurnace(actor, load, tx),
     units: rules.units,
   };
 }

@@ -3,10 +3,10 @@ import { simulate, type FiringInput } from '~/lib/thermal/simulate';
 import type { Simulation } from '~/lib/thermal/simulation';
 import { notValid } from '../errors';
 
-/** Fires a load in a kiln by the models; 422 for a kiln or a load so far from any real one that it would hold the server up. */
-export function simulated(input: FiringInput): Simulation {
+/** Runs the models; 422 for a kiln or a load so far from any real one that it would hold the server up. */
+export function computed<T>(work: () => T): T {
   try {
-    return simulate(input);
+    return work();
   } catch (error) {
     if (!(error instanceof FiringTooStiff)) throw error;
     throw notValid(
@@ -15,3 +15,6 @@ export function simulated(input: FiringInput): Simulation {
     );
   }
 }
+
+/** Fires a load in a kiln by the models. */
+export const simulated = (input: FiringInput): Simulation => computed(() => simulate(input));

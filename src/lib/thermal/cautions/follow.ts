@@ -6,6 +6,7 @@ type SegmentView = ReturnType<typeof segmentsOf> extends Generator<infer Each> ?
 export interface Straying {
   /** Most that it lags on the way up or down, °C, 0 or more. */
   behindC: number;
+  behindAt: number;
   /** Most that it is hotter than asked for, °C, 0 or more, and the place in the simulation's series. */
   hotterC: number;
   hotterAt: number;
@@ -27,13 +28,14 @@ function askedC({ segment, fromC, moments }: SegmentView, atS: number): number |
 export function strayingOf({ simulation }: FiringView, view: SegmentView): Straying {
   const { timeS, chamberC } = simulation;
   const down = view.segment.toC < view.fromC;
-  const straying = { behindC: 0, hotterC: 0, hotterAt: -1 };
+  const straying = { behindC: 0, behindAt: -1, hotterC: 0, hotterAt: -1 };
   const last = placeAt(timeS, view.moments.endS);
   for (let at = placeAt(timeS, view.moments.startS); at <= last; at += 1) {
     const asked = askedC(view, timeS[at] ?? 0);
     if (asked === null) continue;
     const aboveC = (chamberC[at] ?? asked) - asked;
-    straying.behindC = Math.max(straying.behindC, down ? aboveC : -aboveC);
+    const behindC = down ? aboveC : -aboveC;
+    if (behindC > straying.behindC) Object.assign(straying, { behindC, behindAt: at });
     if (aboveC > straying.hotterC) Object.assign(straying, { hotterC: aboveC, hotterAt: at });
   }
   straying.behindC = Math.min(straying.behindC, view.moments.largestLagC);

@@ -1,6 +1,6 @@
 import type { Caution } from '../estimate-schema';
 import { strayingOf } from './follow';
-import { type CautionRule, segmentsOf, seriesAt } from './view';
+import { type CautionRule, type FiringView, segmentsOf, seriesAt } from './view';
 
 /** A kiln that is this little behind follows well enough (the band within which a run is judged). */
 const BEHIND_C = 10;
@@ -35,17 +35,32 @@ export const kilnCannotFollow: CautionRule = (view) => {
     const lateS = moments.rampEndS - moments.startS - plannedRampS;
     const late = lateS > Math.max(LATE_S, LATE_SHARE * plannedRampS);
     if (!moments.kilnLimited) continue;
-    const { behindC } = strayingOf(view, each);
+    const { behindC, behindAt } = strayingOf(view, each);
     if (behindC <= BEHIND_C && !late) continue;
     const verb = segment.toC >= fromC ? 'heat' : 'cool';
     cautions.push({
       ...base,
       severity: 'warn',
-      text: `${label} asks for ${words.rate(segment.rateCPerH)}. The kiln cannot ${verb} that fast: it comes to be ${words.difference(behindC)} behind${late ? ` and arrives ${words.time(lateS)} late` : ''}.`,
+      text: `${label} asks for ${words.rate(segment.rateCPerH)}. The kiln cannot ${verb} that fast: it comes to be ${words.difference(behindC)} behind${late ? ` and arrives ${words.time(lateS)} late` : ''}.${whyBehind(view, behindAt)}`,
     });
   }
   return cautions;
 };
+
+/** Shares of its power below which a kiln is not at full fire. */
+const FULL_SHARE = 0.98;
+
+/** Where the kiln's power goes at a place of the series, where all of it is in use: why it is no faster. */
+function whyBehind({ simulation, words }: FiringView, at: number): string {
+  const powerKW = simulation.powerKW[at] ?? 0;
+  if (at < 0 || powerKW < FULL_SHARE * simulation.fullPowerKW) return '';
+  const chamber = words.temp(simulation.chamberC[at] ?? NaN);
+  const liningKW = Math.max(0, simulation.liningKW[at] ?? 0);
+  const kW = (value: number): string => `${value.toFixed(1)}\u202fkW`;
+  if (simulation.kiln.energy === 'gas')
+    return ` At ${chamber} its burner is at full fire, ${kW(powerKW)}; ${kW(liningKW)} go into the lining, the rest into the load, the air and up the flue.`;
+  return ` At ${chamber} all of its ${kW(powerKW)} are in use: ${kW(liningKW)} go into the lining, ${kW(Math.max(0, powerKW - liningKW))} into the load, the air and the kiln itself.`;
+}
 
 export const programmerCannotHoldIt: CautionRule = (view) => {
   const { simulation, words } = view;

@@ -9,6 +9,8 @@ import { slowedCooling } from './pouring';
 import { type DraftStep, profileOf, wholeMinutesS } from './step';
 
 const MOST_ROUNDS = 40;
+/** Steps times bodies after which a draft is as good as it gets: a second or two of work. */
+const MOST_WORK = 1_000_000;
 const LEAST_RATE_C_PER_H = 15;
 const MOST_HOLD_S = 48 * 3600;
 const RAISING_C_PER_H = 150;
@@ -32,12 +34,15 @@ export function settle(
   input: { ambientC: number; context: CautionContext },
 ): Settled {
   let steps = first.map((step) => ({ ...step, segment: { ...step.segment } }));
+  const bodies = needs.load.moulds.length + needs.load.furniture.length + 1;
+  let work = 0;
   for (let round = 0; ; round += 1) {
     const profile = profileOf(steps, input.ambientC);
     const simulation = simulate({ profile, kiln: needs.kiln, load: needs.load, ambientC: input.ambientC });
     const cautions = cautionsOf(simulation, input.context);
     const settled = { steps, simulation, cautions };
-    if (round >= MOST_ROUNDS) return settled;
+    work += simulation.steps * bodies;
+    if (round >= MOST_ROUNDS || work > MOST_WORK) return settled;
     const next = changed(settled, needs);
     if (next === null) return settled;
     steps = next;
