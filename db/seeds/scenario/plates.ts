@@ -1,5 +1,10 @@
 import type { z } from '~/lib/zod';
-import type { kilnInputSchema, tariffInputSchema, thermocoupleInputSchema } from '~/lib/contracts/equipment';
+import type {
+  furnaceInputSchema,
+  kilnInputSchema,
+  tariffInputSchema,
+  thermocoupleInputSchema,
+} from '~/lib/contracts/equipment';
 import type { SimulatedKiln } from './firing-simulator';
 
 type KilnInput = z.input<typeof kilnInputSchema>;
@@ -142,6 +147,16 @@ export const TARIFFS: Record<'power' | 'gas' | 'ferry', z.input<typeof tariffInp
     name: 'Building supply',
     plan: { currency: 'USD', energy: 'electricity', per: 'kWh', price: '0.1890' },
   },
+};
+
+export const FURNACE: z.input<typeof furnaceInputSchema> = {
+  name: 'Pot furnace in the yard',
+  energy: 'gas',
+  burnerKW: 32,
+  fuel: 'propane',
+  capacityKg: 18,
+  maxC: 1300,
+  note: 'Takes one pot at a time; lit with the lid off.',
 };
 
 export const THERMOCOUPLES: readonly z.input<typeof thermocoupleInputSchema>[] = [

@@ -1,10 +1,16 @@
-import { kilnInputSchema, tariffInputSchema, thermocoupleInputSchema } from '~/lib/contracts/equipment';
+import {
+  furnaceInputSchema,
+  kilnInputSchema,
+  tariffInputSchema,
+  thermocoupleInputSchema,
+} from '~/lib/contracts/equipment';
 import { profileSchema } from '~/lib/profile/schema';
-import { loadSchema } from '~/lib/thermal/load-schema';
+import { loadSchema, type Load } from '~/lib/thermal/load-schema';
 import type { Actor } from '~/lib/server/auth/actor';
 import { createClass } from '~/lib/server/services/classes';
 import { decideFinding, listFindings } from '~/lib/server/services/findings';
 import { createHandout } from '~/lib/server/services/handouts';
+import { createFurnace } from '~/lib/server/services/furnaces';
 import { createKiln } from '~/lib/server/services/kilns';
 import { importLog } from '~/lib/server/services/log-import';
 import { approveVersion, createProfile, submitVersion } from '~/lib/server/services/profiles';
@@ -19,6 +25,7 @@ import { writeLog } from './log-writer';
 import {
   BENCH_KILN,
   FERRY_KILN,
+  FURNACE,
   TALL_KILN,
   TARIFFS,
   THERMOCOUPLES,
@@ -62,6 +69,7 @@ async function seedQuarryLane(now: Date): Promise<Seeded> {
   const tech = actor('tech');
   const power = await createTariff(tech, tariffInputSchema.parse(TARIFFS.power));
   const gas = await createTariff(tech, tariffInputSchema.parse(TARIFFS.gas));
+  const furnace = await createFurnace(tech, furnaceInputSchema.parse({ ...FURNACE, tariffId: gas.id }));
   const thermocoupleIds: string[] = [];
   for (const one of THERMOCOUPLES)
     thermocoupleIds.push((await createThermocouple(tech, thermocoupleInputSchema.parse(one))).id);
@@ -82,6 +90,7 @@ async function seedQuarryLane(now: Date): Promise<Seeded> {
       'printedShells',
       kilnIds.tall,
       'approved',
+      furnace.id,
     ),
     waxShell: await profile('tech', 'Wax shell, straight in', 'waxShell', 'waxShells', kilnIds.yard, 'draft'),
     plasterFlask: await profile(
@@ -127,6 +136,10 @@ async function seedQuarryLane(now: Date): Promise<Seeded> {
   return { kilnIds, versionIds: { ...versionIds, medal } };
 }
 
+/** The load with its pour, if it has one, from a furnace of the studio. */
+const pouredFrom = (load: Load, furnaceId: string | null): Load =>
+  load.pour === null ? load : { ...load, pour: { ...load.pour, furnaceId } };
+
 async function profile(
   author: DemoKey,
   name: string,
@@ -134,13 +147,14 @@ async function profile(
   load: LoadKey,
   kilnId: string,
   until: 'draft' | 'in-review' | 'approved',
+  furnaceId: string | null = null,
 ): Promise<string> {
   const by = actor(author);
   const { id, version } = await createProfile(by, {
     name,
     kilnId,
     profile: profileSchema.parse(PROFILES[key]),
-    load: loadSchema.parse(LOADS[load]),
+    load: pouredFrom(loadSchema.parse(LOADS[load]), furnaceId),
   });
   if (until === 'draft') return version.id;
   await submitVersion(by, id, 1, { note: 'Ready for a look.' });

@@ -68,7 +68,7 @@ function Energy({ energy, cone }: Estimate & { readonly energy: Estimate['energy
           </Row>
         ))}
       {energy.patternKWh >= 0.05 ? (
-        <Row name="Given by the burning pattern">{kWh(-energy.patternKWh)}</Row>
+        <Row name="Given by the burning pattern">{`−${kWh(energy.patternKWh)}`}</Row>
       ) : null}
     </Sheet>
   );
