@@ -3,7 +3,10 @@ import { importsOf, sourceFiles } from '../helpers/source-files';
 
 /** The rooms, the first that a path begins with; the most particular stand first. */
 const ROOMS = [
-  ['core', /^src\/lib\/(units|materials|profile|thermal|sensors|logs|review|planning|learning)(\/|$)/],
+  [
+    'core',
+    /^src\/lib\/(units|materials|profile|thermal|sensors|logs|review|planning|learning|methods)(\/|$)/,
+  ],
   ['core', /^src\/lib\/zod(\.ts)?$/],
   ['contracts', /^src\/lib\/contracts(\/|$)/],
   ['client', /^src\/lib\/client\//],

@@ -15,6 +15,7 @@ test('a page that needs no script ships none', async () => {
     '/profiles',
     '/runs',
     '/materials',
+    '/methods',
     '/account',
     '/runs/new',
     '/profiles/new',

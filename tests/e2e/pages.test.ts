@@ -137,6 +137,8 @@ async function demoPages(furnaceId: string): Promise<Visits> {
       '/',
       '/account',
       '/materials',
+      '/methods',
+      '/methods',
       ...['/kilns', '/kilns?archived=yes', '/kilns/new', `/kilns/${kiln}`, `/kilns/${kiln}/edit`],
       ...['/furnaces', '/furnaces/new', `/furnaces/${furnaceId}`],
       ...['/thermocouples', '/thermocouples/new', `/thermocouples/${thermocouple}`],
@@ -159,7 +161,7 @@ async function demoPages(furnaceId: string): Promise<Visits> {
       '/',
       ...['/handouts', `/handouts/${handout}`, `/handouts/${handout}/print`],
       ...['/profiles', `/profiles/${medal}/versions/1`, `/profiles/${shell}/versions/1`],
-      ...['/runs', `/runs/new?handout=${handout}`, '/materials'],
+      ...['/runs', `/runs/new?handout=${handout}`, '/materials', '/methods'],
     ],
   };
 }

@@ -1,3 +1,4 @@
+import { explanationOf } from '~/lib/methods';
 import type { Caution } from '~/lib/thermal/estimate-schema';
 
 const ORDER = { stop: 0, warn: 1, note: 2 } as const;
@@ -57,7 +58,11 @@ export function Cautions({ cautions, onPoint, onGoTo }: CautionsProps) {
                   {head}
                 </a>
               )}
-              {rest} <span className="caution-source">{caution.source}</span>
+              {rest} <span className="caution-source">{caution.source}.</span>{' '}
+              <a className="caution-how" href={explanationOf(caution.code)}>
+                How this is worked out
+                <span className="strip-hidden">{`: ${head}`}</span>
+              </a>
             </p>
           </li>
         );

@@ -49,6 +49,7 @@ export const ACCESS: readonly AccessRule[] = [
   page('/furnaces/new', KILN_KEEPERS),
   formPage('/furnaces/[id]', KILN_KEEPERS),
   page('/materials', EVERY_ROLE),
+  page('/methods', EVERY_ROLE),
   page('/profiles', EVERY_ROLE),
   formPage('/profiles/new', EVERY_ROLE),
   formPage('/profiles/[id]', EVERY_ROLE),
