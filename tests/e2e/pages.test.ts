@@ -138,7 +138,7 @@ async function demoPages(furnaceId: string): Promise<Visits> {
       '/account',
       '/materials',
       '/methods',
-      '/methods',
+      '/materials/moulds/fused-silica-shell',
       ...['/kilns', '/kilns?archived=yes', '/kilns/new', `/kilns/${kiln}`, `/kilns/${kiln}/edit`],
       ...['/furnaces', '/furnaces/new', `/furnaces/${furnaceId}`],
       ...['/thermocouples', '/thermocouples/new', `/thermocouples/${thermocouple}`],

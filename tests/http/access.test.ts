@@ -133,6 +133,7 @@ describe('the walk over every call', () => {
       'GET /api/health',
       'POST /api/auth/sign-in',
       'POST /api/auth/sign-out',
+      'POST /api/materials/{kind}/{id}/figures',
       'POST /api/setup',
     ]);
   });

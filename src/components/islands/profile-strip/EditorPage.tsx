@@ -56,11 +56,23 @@ function useStart(zone: string): [number | null, (startMs: number) => void] {
 
 function useModel(props: ProfileEditorProps, startMs: number | null) {
   const units = useUnits();
-  const { kilns, furnaces, tariffs, thermocouples, ambientC, attendedHours } = props;
+  const { kilns, furnaces, tariffs, studioFigures, thermocouples, ambientC, attendedHours } = props;
   const zone = props.me.studio.timeZone;
   return useMemo(
-    () => modelOf({ kilns, furnaces, tariffs, thermocouples, ambientC, attendedHours, startMs, zone, units }),
-    [kilns, furnaces, tariffs, thermocouples, ambientC, attendedHours, startMs, zone, units],
+    () =>
+      modelOf({
+        kilns,
+        furnaces,
+        tariffs,
+        studioFigures,
+        thermocouples,
+        ambientC,
+        attendedHours,
+        startMs,
+        zone,
+        units,
+      }),
+    [kilns, furnaces, tariffs, studioFigures, thermocouples, ambientC, attendedHours, startMs, zone, units],
   );
 }
 

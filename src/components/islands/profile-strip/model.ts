@@ -1,4 +1,5 @@
 import type { Furnace, Kiln, Tariff, Thermocouple } from '~/lib/contracts/equipment';
+import { withStudioFigures, type StudioFigures } from '~/lib/materials/studio-figures';
 import { zoneOffset } from '~/lib/planning';
 import { forecastOf } from '~/lib/planning/forecast';
 import { issuesOf } from '~/lib/profile/validate';
@@ -15,6 +16,7 @@ export interface Surroundings {
   readonly kilns: readonly Kiln[];
   readonly furnaces: readonly Furnace[];
   readonly tariffs: readonly Tariff[];
+  readonly studioFigures: readonly StudioFigures[];
   readonly thermocouples: readonly Thermocouple[];
   readonly ambientC: number;
   /** Null before the page is in a browser: nothing is computed then. */
@@ -38,7 +40,7 @@ function estimateDocument(
   const kiln = around.kilns.find((candidate) => candidate.id === document.kilnId);
   if (!kiln || issuesOf(document.profile).length > 0) return null;
   const { profile } = document;
-  const load = document.load ?? EMPTY_LOAD;
+  const load = withStudioFigures(document.load ?? EMPTY_LOAD, around.studioFigures);
   const simulation = simulatedOrNull({ profile, kiln, load, ambientC: around.ambientC });
   if (!simulation) return null;
   const furnace = around.furnaces.find((candidate) => candidate.id === load.pour?.furnaceId) ?? null;

@@ -2,6 +2,7 @@ import { meSchema } from '~/lib/contracts/auth';
 import { idSchema, revisionSchema } from '~/lib/contracts/common';
 import { furnaceSchema, kilnSchema, tariffSchema, thermocoupleSchema } from '~/lib/contracts/equipment';
 import { versionSchema } from '~/lib/contracts/profiles';
+import { studioFiguresSchema } from '~/lib/materials/studio-figures';
 import { z } from '~/lib/zod';
 
 const minuteOfDay = z.number().int().min(0).max(1440);
@@ -16,6 +17,8 @@ export const profileEditorPropsSchema = z.strictObject({
   thermocouples: z.array(thermocoupleSchema).default([]),
   /** Empty for who may not see prices. */
   tariffs: z.array(tariffSchema).default([]),
+  /** The studio's own figures in place of the table's. */
+  studioFigures: z.array(studioFiguresSchema).default([]),
   me: meSchema,
   /** The studio lets an author approve their own version. */
   mayApproveOwn: z.boolean().default(false),

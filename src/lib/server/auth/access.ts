@@ -49,6 +49,7 @@ export const ACCESS: readonly AccessRule[] = [
   page('/furnaces/new', KILN_KEEPERS),
   formPage('/furnaces/[id]', KILN_KEEPERS),
   page('/materials', EVERY_ROLE),
+  formPage('/materials/[kind]/[id]', KILN_KEEPERS),
   page('/methods', EVERY_ROLE),
   page('/profiles', EVERY_ROLE),
   formPage('/profiles/new', EVERY_ROLE),
@@ -89,6 +90,7 @@ export const ACCESS: readonly AccessRule[] = [
   api('/tariffs', { GET: STAFF, POST: KILN_KEEPERS }),
   api('/tariffs/[id]', { GET: STAFF, PATCH: KILN_KEEPERS }),
   api('/materials', { GET: EVERY_ROLE }),
+  api('/materials/[kind]/[id]/figures', { POST: KILN_KEEPERS }),
 
   // ---------------------------------------------------------------- profiles
   api('/estimates', { POST: EVERY_ROLE }),

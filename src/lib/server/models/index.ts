@@ -13,6 +13,7 @@ import { initRuns } from './run';
 import { initSession } from './session';
 import { initSetupToken } from './setup-token';
 import { initStudio } from './studio';
+import { initStudioFigures } from './studio-figures';
 import { initTariffs } from './tariff';
 import { initThermocouples } from './thermocouple';
 import { initThrottle } from './throttle';
@@ -44,4 +45,5 @@ export function initModels(sequelize: Sequelize): void {
   initRuns(sequelize);
   initLogs(sequelize);
   initFindings(sequelize);
+  initStudioFigures(sequelize);
 }

@@ -7,6 +7,7 @@ import { requireKnownMaterials } from './content-check';
 import { cautionContext } from './estimates';
 import { computed } from './firing';
 import { kilnFor, plateOf } from './kilns';
+import { loadInForce } from './studio-figures';
 
 type Request = z.output<(typeof draftRoutes)['draft']['body']>;
 
@@ -20,8 +21,9 @@ export async function draftProfile(actor: Actor, request: Request): Promise<Draf
       { path: 'load.moulds', message: 'at least one mould' },
     ]);
   const context = await cautionContext(actor, kiln, load, null);
+  const inForce = await loadInForce(actor, load);
   const { profile, because, against } = computed(() =>
-    draftOf({ load, kiln: plateOf(kiln), ambientC, context }),
+    draftOf({ load: inForce, kiln: plateOf(kiln), ambientC, context }),
   );
   return { profile, because, against };
 }

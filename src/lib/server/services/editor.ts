@@ -6,6 +6,7 @@ import { studioRules } from '../repositories/studio-rules';
 import { listFurnaces } from './furnaces';
 import { getKiln, listKilns } from './kilns';
 import { getProfile } from './profiles';
+import { figuresInForce } from './studio-figures';
 import { listTariffs } from './tariffs';
 import { listThermocouples } from './thermocouples';
 import { getVersion } from './versions';
@@ -14,15 +15,18 @@ const IN_USE = { limit: 200, archived: 'no' } as const;
 
 /** What the editor of a version is given: the version, and all that its person may choose among. */
 export async function editorProps(actor: Actor, me: Me, profileId: string, number: number) {
-  const [version, profile, kilns, furnaces, thermocouples, tariffs, rules] = await Promise.all([
-    getVersion(actor, profileId, number),
-    getProfile(actor, profileId),
-    listKilns(actor, IN_USE),
-    listFurnaces(actor, IN_USE),
-    listThermocouples(actor, IN_USE),
-    isOnlyStudent(actor) ? null : listTariffs(actor, IN_USE),
-    studioRules(actor.studioId),
-  ]);
+  const [version, profile, kilns, furnaces, thermocouples, tariffs, rules, studioFigures] = await Promise.all(
+    [
+      getVersion(actor, profileId, number),
+      getProfile(actor, profileId),
+      listKilns(actor, IN_USE),
+      listFurnaces(actor, IN_USE),
+      listThermocouples(actor, IN_USE),
+      isOnlyStudent(actor) ? null : listTariffs(actor, IN_USE),
+      studioRules(actor.studioId),
+      figuresInForce(actor),
+    ],
+  );
   const own = await kilnOfVersion(actor, version.kilnId, kilns.items);
   const { id, name, revision, author } = profile;
   return {
@@ -32,6 +36,7 @@ export async function editorProps(actor: Actor, me: Me, profileId: string, numbe
     furnaces: furnaces.items,
     thermocouples: thermocouples.items,
     tariffs: tariffs?.items ?? [],
+    studioFigures,
     me,
     mayApproveOwn: rules.authorsApprove,
     attendedHours: { fromMinute: rules.attendedFromMinute, toMinute: rules.attendedUntilMinute },

@@ -18,6 +18,7 @@ import { loadIssues } from './content-check';
 import { simulated } from './firing';
 import { getFurnace } from './furnaces';
 import { kilnFor, liningIssues, plateOf, requireLinks } from './kilns';
+import { loadInForce } from './studio-figures';
 import { tariffFor } from './tariffs';
 
 type Request = z.output<typeof estimateRequestSchema>;
@@ -44,7 +45,13 @@ export async function estimateFiring(
   const kilnPlan = await planFor(actor, request, kiln, plate);
   const startMs = request.startAt === undefined ? null : Date.parse(request.startAt);
   const context = await cautionContext(actor, kiln, load, startMs);
-  const simulation = simulated({ profile: request.profile, kiln: plate, load, ambientC: request.ambientC });
+  const inForce = await loadInForce(actor, load);
+  const simulation = simulated({
+    profile: request.profile,
+    kiln: plate,
+    load: inForce,
+    ambientC: request.ambientC,
+  });
   const found = forecastOf(simulation, {
     mouldIndex: query.mould ?? null,
     context,
@@ -94,7 +101,13 @@ export async function versionCautions(
 ): Promise<Caution[]> {
   const kiln = await kilnFor(actor, content.kilnId, tx);
   const load = content.load ?? loadSchema.parse({});
-  const simulation = simulated({ profile: content.profile, kiln: plateOf(kiln), load, ambientC: ROOM_C });
+  const inForce = await loadInForce(actor, load, tx);
+  const simulation = simulated({
+    profile: content.profile,
+    kiln: plateOf(kiln),
+    load: inForce,
+    ambientC: ROOM_C,
+  });
   return cautionsOf(simulation, await cautionContext(actor, kiln, load, null, tx));
 }
 

@@ -17,6 +17,7 @@ import {
 } from '../repositories/runs';
 import { requireKnownMaterials } from './content-check';
 import { kilnFor, plateOf } from './kilns';
+import { loadInForce } from './studio-figures';
 import { handoutForRun, handoutNamed } from './handouts';
 import { requirePeople } from './people';
 import { versionForRun } from './profiles';
@@ -219,7 +220,8 @@ export async function signOffRun(actor: Actor, id: string, remark: string, now: 
 /** What a run that begins now is fired from, kept with it for good. */
 export async function frozenNow(actor: Actor, record: RunRecord, tx: Tx): Promise<Frozen> {
   const kiln = await kilnFor(actor, record.run.kiln.id, tx);
-  return { profile: record.run.plan, kiln: plateOf(kiln), load: record.run.load ?? emptyLoad() };
+  const load = await loadInForce(actor, record.run.load ?? emptyLoad(), tx);
+  return { profile: record.run.plan, kiln: plateOf(kiln), load };
 }
 
 export const emptyLoad = (): Load => loadSchema.parse({});

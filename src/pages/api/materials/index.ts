@@ -1,6 +1,6 @@
 import { routes } from '~/lib/contracts';
-import { materials } from '~/lib/materials';
 import { endpoint, methodNotAllowed } from '~/lib/server/http/endpoint';
+import { materialsFor } from '~/lib/server/services/studio-figures';
 
-export const GET = endpoint(routes.materials.list, () => Promise.resolve(materials));
+export const GET = endpoint(routes.materials.list, ({ actor }) => materialsFor(actor));
 export const ALL = methodNotAllowed({ GET });
