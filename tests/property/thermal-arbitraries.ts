@@ -36,8 +36,9 @@ export const kilns: fc.Arbitrary<KilnPlate> = fc.oneof(
 );
 
 const pattern = fc.record({
-  material: fc.constantFrom('pla', 'paraffin', 'beeswax'),
+  material: fc.constantFrom('pla', 'paraffin', 'beeswax', 'pattern-wax', 'castable-resin', 'eps-foam', 'pvb'),
   massKg: number(0.01, 0.6),
+  thickestM: fc.option(number(0.001, 0.03), { nil: null }),
 });
 
 const moulds = fc.oneof(
@@ -80,6 +81,7 @@ const segment = fc.record({
   holdS: number(0, 4 * 3600),
   drain: fc.boolean(),
   vent: fc.constantFrom('open', 'closed'),
+  openedS: fc.option(number(1, 3600), { nil: undefined, freq: 3 }),
 });
 
 /** The same loads, with moulds that hold water that a scale shows: real numbers are drawn by size, and most are next to nothing. */

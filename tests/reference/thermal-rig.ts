@@ -122,6 +122,7 @@ export function fire(
   const watch: Watch = {
     segmentBegins: () => undefined,
     rampEnds: () => undefined,
+    changesInS: () => Infinity,
     beforeStep: () => undefined,
     arrives: (index, atS) => report.arrived?.(index, atS),
     stepTaken: (_index, atS) => report.step?.(atS),

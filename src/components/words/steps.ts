@@ -39,5 +39,6 @@ export function asks(segment: Segment): string[] {
     segment.attended ? 'Somebody must be there' : '',
     segment.drain ? 'Drain the tray' : '',
     segment.vent === 'open' ? 'Vent open' : '',
+    segment.openedS === undefined ? '' : `Open the kiln for ${formatDuration(segment.openedS)}`,
   ].filter(Boolean);
 }

@@ -1,6 +1,17 @@
 import type { Profile, Segment } from './schema';
 
-const FIELDS = ['stage', 'toC', 'rateCPerH', 'holdS', 'attended', 'drain', 'vent', 'instruction'] as const;
+const FIELDS = [
+  'stage',
+  'toC',
+  'rateCPerH',
+  'holdS',
+  'attended',
+  'drain',
+  'vent',
+  'openedS',
+  'openedShare',
+  'instruction',
+] as const;
 export type SegmentField = (typeof FIELDS)[number];
 
 export interface FieldChange {
@@ -34,6 +45,8 @@ const WEIGHT: Record<SegmentField, number> = {
   attended: 0.05,
   drain: 0.05,
   vent: 0.05,
+  openedS: 0.05,
+  openedShare: 0.02,
   instruction: 0.05,
 };
 

@@ -80,7 +80,7 @@ function holdsZincOrLead(metal: string): boolean {
 export function safetyNotesAt(profile: Profile, load: Load | null, index: number): SafetyNote[] {
   const segment = profile.segments[index];
   if (segment === undefined) return [];
-  const somebodyThere = segment.attended || segment.drain;
+  const somebodyThere = segment.attended || segment.drain || segment.openedS !== undefined;
   const poured = segment.stage === 'casting-hold';
   const here: Record<SafetyNote, boolean> = {
     fumes: segment.stage === 'melt-out' || segment.stage === 'burnout',

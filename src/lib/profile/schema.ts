@@ -14,6 +14,7 @@ export const PROFILE_LIMITS = {
   maxRateCPerH: 2000,
   maxHoldS: 7 * 24 * 3600,
   maxDurationS: 14 * 24 * 3600,
+  maxOpenedS: 7200,
   maxInstructionLength: 500,
 } as const;
 
@@ -34,6 +35,11 @@ export const segmentSchema = z.strictObject({
   drain: z.boolean().default(false),
   vent: z.enum(['open', 'closed']).default('closed'),
   instruction: z.string().max(PROFILE_LIMITS.maxInstructionLength).default(''),
+  // Optional and without a default: versions that were kept before these were thought of keep their canonical form and seal.
+  /** How long the kiln stands open once it has come to the target, s. */
+  openedS: z.number().min(1).max(PROFILE_LIMITS.maxOpenedS).optional(),
+  /** Share of its front that is open meanwhile; left out: all of it. */
+  openedShare: z.number().min(0.01).max(1).optional(),
 });
 export type Segment = z.infer<typeof segmentSchema>;
 

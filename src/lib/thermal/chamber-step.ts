@@ -4,6 +4,7 @@ import type { Chamber } from './chamber';
 import { meanAirHeatCapacityJPerKgK } from './air';
 import { shareAir } from './drying';
 import { eliminateWet, keepVapour, phasesChanged } from './plateau';
+import { radiativeFilmWPerM2K } from './radiation';
 import { binOf, integralBetween, temperatureAfter } from './property-table';
 
 const MOST_ROUNDS = 12;
@@ -89,6 +90,9 @@ export function takeStep(chamber: Chamber, afterCorner = false): void {
 
 function prepare(chamber: Chamber, stepS: number, middleC: number): void {
   chamber.ventWPerK = chamber.airKgPerS * meanAirHeatCapacityJPerKgK(middleC);
+  // A cavity looks black: an opening radiates σ·A·(T⁴ − T_room⁴) (Incropera, section 12.3).
+  if (chamber.openM2 > 0)
+    chamber.ventWPerK += chamber.openM2 * radiativeFilmWPerM2K(middleC, chamber.ambientC);
   let wet = false;
   for (const body of chamber.bodies) {
     prepareBody(body, stepS, chamber.lastS, middleC);

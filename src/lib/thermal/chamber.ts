@@ -27,7 +27,9 @@ export interface Chamber {
   lastS: number;
   /** Air that comes in cold and leaves at the chamber's temperature, kg/s. */
   airKgPerS: number;
-  /** The same as a conductance to the room, set for each step, W/K. */
+  /** Of the front, what stands open and radiates to the room, m². */
+  openM2: number;
+  /** Both as a conductance to the room, set for each step, W/K. */
   ventWPerK: number;
   /** Heat released inside, W. */
   sourceW: number;
@@ -94,6 +96,7 @@ export function chamberOf(
     bendCPerS2: 0,
     lastS: 0,
     airKgPerS: 0,
+    openM2: 0,
     ventWPerK: 0,
     sourceW: 0,
     trial: {

@@ -31,6 +31,8 @@ export interface Watch {
   /** The chamber reached the segment's target, or the programmer (if it waits) took it as reached. */
   arrives(index: number, atS: number): void;
   rampEnds(index: number, atS: number): void;
+  /** Seconds until something outside the programme changes; no step goes past it. */
+  changesInS(atS: number): number;
   /** A step is about to be tried: the time to set heat sources. */
   beforeStep(stepS: number): void;
   stepTaken(index: number, atS: number, stepS: number, lagC: number | null): void;
@@ -183,7 +185,8 @@ export class March {
   #step(free: boolean, endS: number): void {
     const { programmer, settings } = this;
     const waiting = this.#isWaiting(free);
-    let stepS = settings.fixedS ?? this.#nextS;
+    const changesInS = this.watch.changesInS(this.atS);
+    let stepS = Math.min(settings.fixedS ?? this.#nextS, changesInS);
     if (!free && !waiting) stepS = Math.min(stepS, endS - programmer.clockS);
     this.#saturated = false;
     this.#cuts = 0;
@@ -201,6 +204,8 @@ export class March {
     programmer.clockS = endS - nextClockS < 0.01 ? Math.max(nextClockS, endS) : nextClockS;
     const lagC = free ? null : setPointC(programmer, programmer.clockS) - this.#readingC;
     this.watch.stepTaken(programmer.index, this.atS, stepS, lagC);
+    // A door that closes is a corner like another.
+    if (changesInS - stepS <= 1e-6) this.#beginPhase(this.mode, null);
     if (landed) {
       this.mode = 'follow';
       if (programmer.doing === 'hold') this.watch.arrives(programmer.index, this.atS);

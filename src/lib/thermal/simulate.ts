@@ -46,6 +46,9 @@ class FiringRecorder implements Watch {
   #lastC: number;
   #lastInputJ = 0;
   #segmentInputJ = 0;
+  #openUntilS = -Infinity;
+  #opening: Segment | null = null;
+  readonly #opens = new Set<number>();
 
   constructor(model: FiringModel, kiln: KilnPlate) {
     this.model = model;
@@ -59,6 +62,9 @@ class FiringRecorder implements Watch {
 
   segmentBegins(index: number, segment: Segment, atS: number): void {
     this.#fire.beginSegment(segment.vent === 'open', segment.drain);
+    this.#close();
+    this.#opening = segment.openedS === undefined ? null : segment;
+    if (this.#opening) this.#opens.add(index);
     this.#segmentInputJ = this.model.chamber.booked.inputJ;
     this.segments[index] = {
       plannedStartS: 0,
@@ -84,6 +90,26 @@ class FiringRecorder implements Watch {
     if (!moments || moments.arrived) return;
     moments.arrived = true;
     moments.rampEndS = atS;
+    this.#open(atS);
+  }
+
+  /** The kiln is opened once it has come to the target. */
+  #open(atS: number): void {
+    const segment = this.#opening;
+    if (segment?.openedS === undefined) return;
+    const { innerWidthM, innerHeightM } = this.#kiln;
+    this.model.chamber.openM2 = innerWidthM * innerHeightM * (segment.openedShare ?? 1);
+    this.#openUntilS = atS + segment.openedS;
+    this.#opening = null;
+  }
+
+  #close(): void {
+    this.model.chamber.openM2 = 0;
+    this.#openUntilS = -Infinity;
+  }
+
+  changesInS(atS: number): number {
+    return this.#openUntilS > atS ? this.#openUntilS - atS : Infinity;
   }
 
   segmentEnds(index: number, atS: number): void {
@@ -100,7 +126,9 @@ class FiringRecorder implements Watch {
 
   stepTaken(index: number, atS: number, stepS: number, lagC: number | null): void {
     const moments = this.segments[index];
-    if (moments && lagC !== null) {
+    if (atS >= this.#openUntilS - 1e-6) this.#close();
+    // What an opening takes is no fault of the kiln's power.
+    if (moments && lagC !== null && !(moments.arrived && this.#opens.has(index))) {
       moments.largestLagC = Math.max(moments.largestLagC, Math.abs(lagC));
       moments.kilnLimited = moments.largestLagC > FOLLOWS_WITHIN_C;
     }

@@ -18,7 +18,7 @@ import { Figures } from './Figures';
 import { UndoButtons } from './History';
 import { keptOf, type Theirs } from './keep';
 import { KilnPicker } from './KilnPicker';
-import { availableLayers, FIRST_SHOWN, type LayerId } from './layers-shown';
+import { availableLayers, FIRST_SHOWN, switchedLayers, type LayerId } from './layers-shown';
 import { LayerSwitches } from './LayerSwitches';
 import { LoadPanel } from './LoadPanel';
 import { modelOf } from './model';
@@ -78,15 +78,7 @@ function useModel(props: ProfileEditorProps, startMs: number | null) {
 
 function useLayers(): [ReadonlySet<LayerId>, (id: LayerId) => void] {
   const [shown, setShown] = useState<ReadonlySet<LayerId>>(() => new Set(FIRST_SHOWN));
-  const toggle = useCallback(
-    (id: LayerId) =>
-      setShown((before) => {
-        const next = new Set(before);
-        if (!next.delete(id)) next.add(id);
-        return next;
-      }),
-    [],
-  );
+  const toggle = useCallback((id: LayerId) => setShown((before) => switchedLayers(before, id)), []);
   return [shown, toggle];
 }
 

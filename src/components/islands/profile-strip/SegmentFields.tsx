@@ -162,6 +162,43 @@ export function InstructionField({ segment, edits, index }: SegmentFieldProps) {
   );
 }
 
+const OPENED_FIRST_S = 300;
+
+/** Whether the kiln is opened once it is there, and for how long. */
+function OpenedField({ segment, edits, index }: Pick<SegmentFieldProps, 'segment' | 'edits' | 'index'>) {
+  const { openedS } = segment;
+  return (
+    <>
+      <label>
+        <input
+          className="check"
+          type="checkbox"
+          checked={openedS !== undefined}
+          onChange={(event) =>
+            edits.set(event.currentTarget.checked ? { openedS: OPENED_FIRST_S } : { openedS: undefined })
+          }
+        />
+        opened
+      </label>
+      {openedS === undefined ? null : (
+        <QuantityInput
+          label={`Time that the kiln stands open at segment ${index + 1}`}
+          field="opened"
+          text={durationText(openedS)}
+          parse={(typed) => {
+            const found = parseDuration(typed, 'min');
+            if (found.ok && (found.value < 1 || found.value > PROFILE_LIMITS.maxOpenedS))
+              return { ok: false as const, issue: 'Up to 2 hours.' };
+            return found;
+          }}
+          understood={durationText}
+          onCommit={(seconds) => edits.set({ openedS: seconds }, `${index}.opened`)}
+        />
+      )}
+    </>
+  );
+}
+
 const RAMP_KINDS = [
   ['rate', 'by rate'],
   ['time', 'by time'],
@@ -227,6 +264,7 @@ export function MoreFields(props: SegmentFieldProps & { readonly onRampsAs: (ram
           />
           attended
         </label>
+        <OpenedField segment={segment} edits={edits} index={index} />
       </div>
     </div>
   );

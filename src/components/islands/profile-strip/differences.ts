@@ -14,6 +14,8 @@ const FIELD_WORDS: Readonly<Record<FieldChange['field'], string>> = {
   attended: 'attended',
   drain: 'drain',
   vent: 'vent',
+  openedS: 'stands open',
+  openedShare: 'share open',
   instruction: 'instruction',
 };
 

@@ -32,7 +32,8 @@ export function strayingOf({ simulation }: FiringView, view: SegmentView): Stray
   const last = placeAt(timeS, view.moments.endS);
   for (let at = placeAt(timeS, view.moments.startS); at <= last; at += 1) {
     const asked = askedC(view, timeS[at] ?? 0);
-    if (asked === null) continue;
+    const isOpened = view.segment.openedS !== undefined && (timeS[at] ?? 0) > view.moments.rampEndS;
+    if (asked === null || isOpened) continue;
     const aboveC = (chamberC[at] ?? asked) - asked;
     const behindC = down ? aboveC : -aboveC;
     if (behindC > straying.behindC) Object.assign(straying, { behindC, behindAt: at });
