@@ -14,6 +14,24 @@ const ceramicHeatCapacity = curve(
   `${HANDBOOK}: aluminosilicates`,
   'memory',
 );
+/** Mean over each stretch meets the enthalpies of the same polynomials. */
+const mulliteHeatCapacity = curve(
+  [
+    [25, 766],
+    [77, 849],
+    [127, 916],
+    [227, 1014],
+    [327, 1080],
+    [527, 1159],
+    [727, 1205],
+    [927, 1235],
+    [1127, 1258],
+    [1327, 1277],
+  ],
+  'J/(kg·K)',
+  'NASA TM-4513 polynomials of mullite, 3Al2O3·2SiO2 (JANAF 9/67)',
+  'published',
+);
 const ceramicEmissivity = constant(0.75, '1', HANDBOOK, 'memory');
 
 export const furniture: FurnitureMaterial[] = [
@@ -36,7 +54,7 @@ export const furniture: FurnitureMaterial[] = [
     properties: {
       densityKgPerM3: constant(2400, 'kg/m³', HANDBOOK, 'memory'),
       conductivityWPerMK: constant(1.9, 'W/(m·K)', HANDBOOK, 'memory'),
-      heatCapacityJPerKgK: ceramicHeatCapacity,
+      heatCapacityJPerKgK: mulliteHeatCapacity,
       emissivity: ceramicEmissivity,
       maxC: constant(1400, '°C', HANDBOOK, 'memory'),
     },
