@@ -6,17 +6,18 @@ import {
   settlePattern,
 } from '~/lib/thermal/pattern-burnout';
 
-/** One first-order step, all of it gas. */
+/** One step, first-order unless said, all of it gas. */
 export interface OneStep {
   readonly activationKJPerMol: number;
   readonly preExponentialPerS: number;
+  readonly model?: PatternProperties['steps'][number]['model'];
 }
 
 /** The solver's steps: it keeps each to a few kelvin where things change. */
 const STEP_C = 2;
 const STEP_S = 60;
 
-const patternOf = ({ activationKJPerMol, preExponentialPerS }: OneStep): PatternProperties => ({
+const patternOf = ({ activationKJPerMol, preExponentialPerS, model }: OneStep): PatternProperties => ({
   massKg: 1,
   flowsC: null,
   drainedShare: 0,
@@ -31,7 +32,7 @@ const patternOf = ({ activationKJPerMol, preExponentialPerS }: OneStep): Pattern
       massShare: 1,
       activationJPerMol: activationKJPerMol * 1000,
       preExponentialPerS,
-      model: 'first-order',
+      model: model ?? 'first-order',
       follows: null,
       needsAir: false,
     },

@@ -1,3 +1,4 @@
+import oneTerm from '../../fixtures/references/heat-one-term.json' with { type: 'json' };
 import semiInfinite from '../../fixtures/references/heat-semi-infinite.json' with { type: 'json' };
 import shellLag from '../../fixtures/references/heat-shell-lag.json' with { type: 'json' };
 import stefan from '../../fixtures/references/heat-stefan.json' with { type: 'json' };
@@ -248,6 +249,42 @@ export function wallStepRun(spoil: Spoil = {}): number {
     });
   }
   return worstOfColumnRange(rows, computed, [2, 3, 4]) / tolerance.ofColumnRange;
+}
+
+/** H5: decay of the middle of a wall or a cylinder after a step: ζ1 from two late moments, then C1. Spheres are no shape of ours. */
+export function oneTermRun(shape: 'wall' | 'cylinder', spoil: Spoil = {}): number {
+  const [reference] = oneTerm.cases;
+  if (reference === undefined) throw new RangeError('no case');
+  const [k, depthM, rhoC] = [1, 0.05, 2e6];
+  // Late enough for the second term to be below 1e-4 of the first.
+  const [earlyFo, lateFo] = [1, 1.5];
+  const perFourierS = (depthM ** 2 * rhoC) / k;
+  const worst = reference.rows.map(([biot = NaN, ...coefficients]) => {
+    const wall = slab({
+      thicknessM: depthM,
+      k,
+      rhoC,
+      startC: 20,
+      cells: 20,
+      filmWPerM2K: (biot * k) / depthM,
+    });
+    const area: BodyProperties['area'] =
+      shape === 'wall' ? wall.area : [2 * Math.PI * depthM, -2 * Math.PI, 0];
+    const body = bodyWith({ ...wall, area }, spoil);
+    const theta: number[] = [];
+    fire(
+      chamberWith([body], { startC: 1020 }),
+      [leg(1020, 100, earlyFo * perFourierS), leg(1020, 100, (lateFo - earlyFo) * perFourierS)],
+      { ended: () => theta.push((1020 - lastNodeC(body)) / 1000) },
+      { toleranceC: 1, mostS: 600, fixedS: perFourierS / 2000 },
+    );
+    const [early = NaN, late = NaN] = theta;
+    const zeta = Math.sqrt(Math.log(early / late) / (lateFo - earlyFo));
+    const first = early * Math.exp(zeta ** 2 * earlyFo);
+    const [zetaTrue = NaN, firstTrue = NaN] = shape === 'wall' ? coefficients : coefficients.slice(2);
+    return Math.max(Math.abs(zeta / zetaTrue - 1), Math.abs(first / firstTrue - 1));
+  });
+  return Math.max(...worst) / reference.tolerance.relative;
 }
 
 /** H11: the dry front moving into a wet slab held at 100 °C, its depth read from the water that is gone. */

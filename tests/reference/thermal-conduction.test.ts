@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import oneTerm from '../../fixtures/references/heat-one-term.json' with { type: 'json' };
 import semiInfinite from '../../fixtures/references/heat-semi-infinite.json' with { type: 'json' };
 import stefan from '../../fixtures/references/heat-stefan.json' with { type: 'json' };
 import shellLag from '../../fixtures/references/heat-shell-lag.json' with { type: 'json' };
@@ -6,6 +7,7 @@ import wall from '../../fixtures/references/heat-wall.json' with { type: 'json' 
 import wallStep from '../../fixtures/references/heat-wall-step.json' with { type: 'json' };
 import {
   lagShapesRun,
+  oneTermRun,
   semiInfiniteRun,
   shellLagRun,
   stefanRun,
@@ -54,6 +56,16 @@ describe(`${wallStep.title}: ${wallStep.cases[0]?.source ?? ''}`, () => {
   });
   it('notices a film that is 2 % off', () => {
     expect(wallStepRun({ film: 1.02 })).toBeGreaterThan(1);
+  });
+});
+
+describe(`${oneTerm.title}: ${oneTerm.cases[0]?.source ?? ''}`, () => {
+  it.each(['wall', 'cylinder'] as const)('%s: root and coefficient, Bi 0.1 to 10', (shape) => {
+    expect(oneTermRun(shape)).toBeLessThanOrEqual(1);
+  });
+  it('notices a heat capacity that is 1 % off, which moves the root by 0.5 %', () => {
+    expect(oneTermRun('wall', { capacity: 1.01 })).toBeGreaterThan(1);
+    expect(oneTermRun('cylinder', { capacity: 1.01 })).toBeGreaterThan(1);
   });
 });
 
