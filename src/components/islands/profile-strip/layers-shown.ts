@@ -122,6 +122,19 @@ export type LayerId = (typeof LAYERS)[number]['id'];
 
 export const FIRST_SHOWN: readonly LayerId[] = LAYERS.filter((layer) => layer.atFirst).map(({ id }) => id);
 
+/** More curves of their own scale than this cannot be told apart on one strip. */
+const MOST_ASIDES = 2;
+const OF_THEIR_OWN_SCALE: readonly LayerId[] = ['water', 'gas', 'power', 'heat-work'];
+
+/** The layers after one is switched: of those with a scale of their own the oldest goes where there would be too many. */
+export function switchedLayers(shown: ReadonlySet<LayerId>, id: LayerId): ReadonlySet<LayerId> {
+  const next = new Set(shown);
+  if (next.delete(id)) return next;
+  const asides = [...next].filter((each) => OF_THEIR_OWN_SCALE.includes(each));
+  if (OF_THEIR_OWN_SCALE.includes(id) && asides.length >= MOST_ASIDES && asides[0]) next.delete(asides[0]);
+  return next.add(id);
+}
+
 const entries: readonly (LayerEntry & { readonly id: LayerId })[] = LAYERS;
 
 /** The layer as a curve, or nothing where there is nothing to show or it is not drawn as one. */
