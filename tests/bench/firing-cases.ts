@@ -14,15 +14,39 @@ const kiln: KilnPlateInput = {
   ratedKW: 14,
 };
 
-const pattern = { material: 'pla', massKg: 0.15 };
+const pattern = { material: 'pla', massKg: 0.15, thickestM: 0.005 };
 const load: LoadInput = {
   moulds: [
-    { material: 'fused-silica-shell', massKg: 6, waterKg: 0.3, wallM: 0.008, pattern },
-    { material: 'aluminosilicate-shell', massKg: 9, waterKg: 0.4, wallM: 0.012, heatedFaces: 2, pattern },
-    { form: 'flask', material: 'gypsum-investment', massKg: 4, waterKg: 1.2, diameterM: 0.13, pattern },
-    { material: 'fused-silica-shell', massKg: 3, count: 3, wallM: 0.01, pattern },
+    {
+      material: 'fused-silica-shell',
+      massKg: 6,
+      waterKg: 0.3,
+      wallM: 0.008,
+      thinnestSectionM: 0.004,
+      pattern,
+    },
+    {
+      material: 'aluminosilicate-shell',
+      massKg: 9,
+      waterKg: 0.4,
+      wallM: 0.012,
+      heatedFaces: 2,
+      thinnestSectionM: 0.005,
+      pattern,
+    },
+    {
+      form: 'flask',
+      material: 'gypsum-investment',
+      massKg: 4,
+      waterKg: 1.2,
+      diameterM: 0.13,
+      thinnestSectionM: 0.006,
+      pattern,
+    },
+    { material: 'fused-silica-shell', massKg: 3, count: 3, wallM: 0.01, thinnestSectionM: 0.003, pattern },
   ],
   furniture: [{ material: 'cordierite', massKg: 12, thicknessM: 0.018 }],
+  pour: { metal: 'tin-bronze-90-10', chargeKg: 20, pourC: 1180 },
 };
 
 const day: ProfileInput = {

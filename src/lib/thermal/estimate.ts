@@ -3,6 +3,7 @@ import { type CautionContext, cautionsOf } from './cautions';
 import { lastConeDown } from './cone';
 import type { Caution, Estimate, PourEstimate } from './estimate-schema';
 import { type PourForecast, pourOf } from './melt/pour';
+import { LONGEST_FLOW_S } from './melt/pour-wall';
 import { readyS, slowestMould } from './readiness';
 import { type FiringInput, simulate } from './simulate';
 import type { MouldTrace, Simulation } from './simulation';
@@ -87,9 +88,6 @@ export function estimateOf(
   };
 }
 
-/** Longest that metal is said to go on flowing, s: what is longer is long enough. */
-const LONG_FLOW_S = 600;
-
 /** The pour without money: that comes from the furnace's tariff. */
 function pourEstimate({ melting, moulds, ...pour }: PourForecast): PourEstimate {
   return {
@@ -114,9 +112,9 @@ function pourEstimate({ melting, moulds, ...pour }: PourForecast): PourEstimate 
       coreAtPourC,
       fill: fill && {
         judgement: fill.judgement,
-        flowsS: Math.min(LONG_FLOW_S, fill.flowsS),
-        flowsFromS: Math.min(LONG_FLOW_S, fill.flowsFromS),
-        flowsToS: Math.min(LONG_FLOW_S, fill.flowsToS),
+        flowsS: Math.min(LONGEST_FLOW_S, fill.flowsS),
+        flowsFromS: Math.min(LONGEST_FLOW_S, fill.flowsFromS),
+        flowsToS: Math.min(LONGEST_FLOW_S, fill.flowsToS),
         fillS: fill.fillS,
         superheatC: fill.superheatK,
         usualSuperheatFromC: fill.usualSuperheatK[0],

@@ -1,5 +1,6 @@
 import type { Caution } from '../estimate-schema';
 import { LEAST_SUPERHEAT_K } from '../melt/pour';
+import { LONGEST_FLOW_S } from '../melt/pour-wall';
 import { readySegment } from '../readiness';
 import type { CautionRule, FiringView } from './view';
 import { inSentence, twoDigits } from './words';
@@ -100,7 +101,7 @@ export const mouldColdAtPour: CautionRule = (view) => {
         ...place,
         severity: misruns ? 'warn' : 'note',
         atS: pour.atS,
-        text: `The ${words.length(sectionM)} section of ${inSentence(mould.name)} ${misruns ? 'likely misruns' : 'may misrun'}: its core is at ${words.temp(coreAtPourC)} when the metal comes with ${words.difference(fill.superheatK)} of superheat. Metal flows there for ${twoDigits(fill.flowsFromS)} to ${twoDigits(Math.min(fill.flowsToS, 600))} s; filling takes about ${twoDigits(fill.fillS)} s.`,
+        text: `The ${words.length(sectionM)} section of ${inSentence(mould.name)} ${misruns ? 'likely misruns' : 'may misrun'}: its core is at ${words.temp(coreAtPourC)} when the metal comes with ${words.difference(fill.superheatK)} of superheat. Metal flows there for ${twoDigits(fill.flowsFromS)} to ${twoDigits(Math.min(fill.flowsToS, LONGEST_FLOW_S))} s; filling takes about ${twoDigits(fill.fillS)} s.`,
         source:
           'Time to lose superheat and half the heat of fusion to the wall; contact and flow are known to a factor of two',
       },

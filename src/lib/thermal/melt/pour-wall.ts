@@ -21,8 +21,43 @@ export interface FaceMetal {
   readonly tempOf: (enthalpyJPerKg: number) => number;
 }
 
-const FINEST_M = 0.0004;
+/** Longest that metal is followed while it flows, s: what flows longer flows long enough. */
+export const LONGEST_FLOW_S = 120;
+
+const FINEST_M = 0.0006;
 const MOST_CELLS = 24;
+/** Steps between two readings of the properties: a cell moves by a few kelvin meanwhile. */
+const PROPERTIES_EVERY = 8;
+
+/** Properties of each cell, read now and then, and the flows between them. */
+interface WallState {
+  readonly capacity: Float64Array;
+  readonly conductivity: Float64Array;
+  readonly flux: Float64Array;
+  film: number;
+  age: number;
+}
+
+function wallState(cells: number): WallState {
+  return {
+    capacity: new Float64Array(cells),
+    conductivity: new Float64Array(cells),
+    flux: new Float64Array(cells + 1),
+    film: 0,
+    age: 0,
+  };
+}
+
+function readProperties(wall: PourWall, tempC: Float64Array, state: WallState): void {
+  const cellM = wall.wallM / tempC.length;
+  for (let i = 0; i < tempC.length; i++) {
+    state.capacity[i] = wall.densityKgPerM3 * curveAt(wall.heatCapacityJPerKgK, tempC[i]!) * cellM;
+    state.conductivity[i] = curveAt(wall.conductivityWPerMK, tempC[i]!);
+  }
+  const skinC = tempC[0]!;
+  state.film =
+    curveAt(wall.emissivity, skinC) * radiativeFilmWPerM2K(skinC, wall.ambientC) + wall.convectionWPerM2K;
+}
 
 /** Temperatures through the wall, outer face first: `cells` equal cells. */
 export function wallBetween({ wallM }: PourWall, outerC: number, innerC: number): Float64Array {
@@ -53,36 +88,30 @@ function step(
   tempC: Float64Array,
   stepS: number,
   metal: { tempC: number; contact: number } | null,
+  state: WallState,
 ): number {
+  if (state.age++ % PROPERTIES_EVERY === 0) readProperties(wall, tempC, state);
+  const { capacity, conductivity, flux, film } = state;
   const cells = tempC.length;
-  const cellM = wall.wallM / cells;
-  const flux = new Float64Array(cells + 1);
-  const skinC = tempC[0] ?? 0;
-  const half = curveAt(wall.conductivityWPerMK, skinC) / (cellM / 2);
-  const film =
-    curveAt(wall.emissivity, skinC) * radiativeFilmWPerM2K(skinC, wall.ambientC) + wall.convectionWPerM2K;
-  flux[0] = (skinC - wall.ambientC) / (1 / film + 1 / half);
-  for (let i = 1; i < cells; i++) {
-    const middleC = ((tempC[i] ?? 0) + (tempC[i - 1] ?? 0)) / 2;
-    flux[i] = (curveAt(wall.conductivityWPerMK, middleC) / cellM) * ((tempC[i] ?? 0) - (tempC[i - 1] ?? 0));
-  }
-  const innerC = tempC[cells - 1] ?? 0;
-  if (metal) {
-    const innerHalf = curveAt(wall.conductivityWPerMK, innerC) / (cellM / 2);
-    flux[cells] = (metal.tempC - innerC) / (1 / metal.contact + 1 / innerHalf);
-  }
-  for (let i = 0; i < cells; i++) {
-    const capacity = wall.densityKgPerM3 * curveAt(wall.heatCapacityJPerKgK, tempC[i] ?? 0) * cellM;
-    tempC[i] = (tempC[i] ?? 0) + (stepS * ((flux[i + 1] ?? 0) - (flux[i] ?? 0))) / capacity;
-  }
-  return (flux[cells] ?? 0) * stepS;
+  const perM = cells / wall.wallM;
+  flux[0] = (tempC[0]! - wall.ambientC) / (1 / film + 1 / (2 * perM * conductivity[0]!));
+  for (let i = 1; i < cells; i++)
+    flux[i] = ((conductivity[i]! + conductivity[i - 1]!) / 2) * perM * (tempC[i]! - tempC[i - 1]!);
+  const inner = cells - 1;
+  flux[cells] =
+    metal === null
+      ? 0
+      : (metal.tempC - tempC[inner]!) / (1 / metal.contact + 1 / (2 * perM * conductivity[inner]!));
+  for (let i = 0; i < cells; i++) tempC[i] = tempC[i]! + (stepS * (flux[i + 1]! - flux[i]!)) / capacity[i]!;
+  return flux[cells]! * stepS;
 }
 
 /** The wall after standing empty in the room for a time; the given temperatures are not changed. */
 export function wallAfterS(wall: PourWall, startC: Float64Array, forS: number): Float64Array {
   const tempC = startC.slice();
   const stepS = stableStepS(wall, tempC, 0);
-  for (let atS = 0; atS < forS; atS += stepS) step(wall, tempC, Math.min(stepS, forS - atS), null);
+  const state = wallState(tempC.length);
+  for (let atS = 0; atS < forS; atS += stepS) step(wall, tempC, Math.min(stepS, forS - atS), null, state);
   return tempC;
 }
 
@@ -96,14 +125,15 @@ export function flowsForS(
   metal: FaceMetal,
   fromJPerKg: number,
   untilJPerKg: number,
-  mostS = 600,
+  mostS = LONGEST_FLOW_S,
 ): number {
   const tempC = startC.slice();
   const stepS = stableStepS(wall, tempC, metal.contactWPerM2K);
+  const state = wallState(tempC.length);
   let enthalpy = fromJPerKg;
   for (let atS = 0; atS < mostS; atS += stepS) {
     const hot = { tempC: metal.tempOf(enthalpy), contact: metal.contactWPerM2K };
-    const next = enthalpy - step(wall, tempC, stepS, hot) / metal.massKgPerM2;
+    const next = enthalpy - step(wall, tempC, stepS, hot, state) / metal.massKgPerM2;
     if (next <= untilJPerKg) return atS + (stepS * (enthalpy - untilJPerKg)) / (enthalpy - next);
     enthalpy = next;
   }
