@@ -103,7 +103,7 @@ function step(
       ? 0
       : (metal.tempC - tempC[inner]!) / (1 / metal.contact + 1 / (2 * perM * conductivity[inner]!));
   for (let i = 0; i < cells; i++) tempC[i] = tempC[i]! + (stepS * (flux[i + 1]! - flux[i]!)) / capacity[i]!;
-  return flux[cells]! * stepS;
+  return flux[cells] * stepS;
 }
 
 /** The wall after standing empty in the room for a time; the given temperatures are not changed. */
