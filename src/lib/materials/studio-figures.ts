@@ -55,6 +55,13 @@ export function withStudioFigures(load: Load, studio: readonly Of[]): Load {
 /** A figure further from the table's than this many times is a slip of the pen or of the unit. */
 const MOST_TIMES = 20;
 
+/** Ends that the meaning of a property sets, however far the table's figure is from them. */
+const MEANT: Readonly<Record<string, readonly [number, number]>> = {
+  emissivity: [0.01, 1],
+  poissonRatio: [0, 0.49],
+  tortuosity: [1, 60],
+};
+
 /** What is wrong with own figures of a material: path and what is expected there. */
 export function figureIssues(
   kind: FigureKind,
@@ -73,11 +80,20 @@ export function figureIssues(
     const isShare = name.endsWith('Share');
     if (isShare && (value < 0 || value > 1)) return [{ path, message: 'a share between 0 and 1' }];
     const isTemperature = property.unit === '°C';
-    const bounds = isTemperature
-      ? ([low - 500, high + 500] as const)
-      : ([Math.min(0, low * MOST_TIMES) + (low > 0 ? low / MOST_TIMES : 0), high * MOST_TIMES] as const);
+    const meant = Object.hasOwn(MEANT, name) ? MEANT[name] : undefined;
+    const bounds =
+      meant ??
+      (isTemperature
+        ? ([low - 500, high + 500] as const)
+        : ([Math.min(0, low * MOST_TIMES) + (low > 0 ? low / MOST_TIMES : 0), high * MOST_TIMES] as const));
     if (!isShare && (value < bounds[0] || value > bounds[1]))
-      return [{ path, message: `between ${tidy(bounds[0])} and ${tidy(bounds[1])} ${property.unit}` }];
+      return [
+        {
+          path,
+          message:
+            `between ${tidy(bounds[0])} and ${tidy(bounds[1])} ${property.unit === '1' ? '' : property.unit}`.trim(),
+        },
+      ];
     return [];
   });
 }
