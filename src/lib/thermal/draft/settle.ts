@@ -119,7 +119,7 @@ function answer(caution: Caution, steps: DraftStep[], simulation: Simulation, ne
     case 'steam-in-wall':
       return grave && step !== undefined && slower(step, needs);
     case 'cooling-too-fast':
-      return step !== undefined && slower(step, needs, LEAST_RATE_C_PER_H);
+      return step !== undefined && comesDown(step) && slower(step, needs, LEAST_RATE_C_PER_H);
     case 'burnout-incomplete':
       return longer(lastOf(steps, ['char-below-limit', 'burn']), 1.4) || hotter(lastOf(steps, ['burn']), 25);
     case 'sulphur-risk':
@@ -129,7 +129,7 @@ function answer(caution: Caution, steps: DraftStep[], simulation: Simulation, ne
     case 'mould-cold-at-pour':
       return hotter(lastOf(steps, ['cast']), 40);
     case 'no-drain-step':
-      return longer(lastOf(steps, ['melt-wax', 'melt-print']), 1.3);
+      return longer(lastOf(steps, ['melt-wax', 'melt-print', 'dry']), 1.3);
     case 'above-material-limit':
     case 'above-kiln-limit':
     case 'above-thermocouple-limit':
@@ -138,6 +138,9 @@ function answer(caution: Caution, steps: DraftStep[], simulation: Simulation, ne
       return false;
   }
 }
+
+/** Whether a step is there to bring the mould down: one that heats is not slowed for what cools beside it. */
+const comesDown = ({ purpose }: DraftStep): boolean => ['cast', 'cool', 'cool-slowly'].includes(purpose);
 
 const lastOf = (
   steps: readonly DraftStep[],
