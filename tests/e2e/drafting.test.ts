@@ -122,7 +122,10 @@ test('a caution that stops it is answered in writing before a version is approve
   const { page } = await browser.openAs('teacher');
   await page.goto(draft.path);
   await alive(page);
-  expect((await cautionTexts(editorOf(page))).join('\n')).toMatch(/Its material stands 788 °C/);
+  // the estimate is drawn a frame or two after the page is alive
+  await expect
+    .poll(async () => (await cautionTexts(editorOf(page))).join('\n'))
+    .toMatch(/Its material stands 788 °C/);
   await page.getByRole('button', { name: 'Approve', exact: true }).first().click();
   const dialog = page.getByRole('dialog');
   const reason = dialog.getByRole('textbox', { name: 'Why it may be fired all the same' });
