@@ -9,15 +9,9 @@ export interface CostShare {
   cost: Money;
 }
 
-const massesKg = (load: Load): number[] =>
+/** Mass of each line of moulds, water and pattern included, kg: what energy and cost are split by. */
+export const massesKg = (load: Load): number[] =>
   load.moulds.map((mould) => mould.count * (mould.massKg + mould.waterKg + (mould.pattern?.massKg ?? 0)));
-
-/** What each line of moulds is of all moulds, by mass with water and pattern, 0-1; furniture belongs to everybody. */
-export function massShares(load: Load): number[] {
-  const masses = massesKg(load);
-  const totalKg = masses.reduce((sum, massKg) => sum + massKg, 0);
-  return masses.map((massKg) => massKg / totalKg);
-}
 
 /**
  * Splits the cost of a firing over the moulds of its load by their mass, water and pattern included; furniture belongs

@@ -144,7 +144,13 @@ export const estimateSchema = z.strictObject({
   cone: z.string().nullable(),
   /** What the lines of moulds bear of energy and cost, by mass with water and pattern. */
   split: z.array(
-    z.strictObject({ mould: z.number().int(), share: n, energyKWh: n, cost: moneySchema.nullable() }),
+    z.strictObject({
+      mould: z.number().int(),
+      massKg: n,
+      share: n,
+      energyKWh: n,
+      cost: moneySchema.nullable(),
+    }),
   ),
   /** Null where the load has no pour. */
   pour: pourEstimateSchema.nullable(),

@@ -1,4 +1,4 @@
-import { fuelOf, massShares } from '../planning';
+import { fuelOf, massesKg } from '../planning';
 import { type CautionContext, cautionsOf } from './cautions';
 import { lastConeDown } from './cone';
 import type { Caution, Estimate, PourEstimate } from './estimate-schema';
@@ -77,15 +77,20 @@ export function estimateOf(
     curve: curveOf(simulation, mould),
     energy: simulation.energy,
     cone: mould === undefined ? null : (lastConeDown(simulation.timeS, mould.coreC)?.name ?? null),
-    split: massShares(simulation.load).map((share, index) => ({
-      mould: index,
-      share,
-      energyKWh: share * simulation.energy.inKWh,
-      cost: null,
-    })),
+    split: splitOf(simulation),
     pour: pour === null ? null : pourEstimate(pour),
     cautions,
   };
+}
+
+/** What each line of moulds bears by its mass; furniture belongs to everybody. */
+function splitOf({ load, energy }: Simulation): Estimate['split'] {
+  const masses = massesKg(load);
+  const totalKg = masses.reduce((sum, massKg) => sum + massKg, 0);
+  return masses.map((massKg, mould) => {
+    const share = massKg / totalKg;
+    return { mould, massKg, share, energyKWh: share * energy.inKWh, cost: null };
+  });
 }
 
 /** The pour without money: that comes from the furnace's tariff. */

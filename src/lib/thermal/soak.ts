@@ -1,4 +1,5 @@
 import { READY_WITHIN_C } from './readiness';
+import { seriesAt } from './series';
 import type { MouldTrace, Simulation } from './simulation';
 
 /** Stretch of a hold's end from which the pace of the core is read, s. */
@@ -19,23 +20,9 @@ export function soakMoreS(simulation: Simulation, mould: MouldTrace, index: numb
   if (segment === undefined || moments === undefined || segment.holdS <= 0 || !moments.arrived) return null;
   const heldS = moments.endS - moments.rampEndS;
   const overS = Math.min(READ_OVER_S, heldS / 2);
-  const endC = Math.abs(segment.toC - at(simulation.timeS, mould.coreC, moments.endS));
-  const beforeC = Math.abs(segment.toC - at(simulation.timeS, mould.coreC, moments.endS - overS));
+  const endC = Math.abs(segment.toC - seriesAt(simulation.timeS, mould.coreC, moments.endS));
+  const beforeC = Math.abs(segment.toC - seriesAt(simulation.timeS, mould.coreC, moments.endS - overS));
   if (!(endC > READY_WITHIN_C) || !(beforeC > endC)) return null;
   const moreS = (overS / Math.log(beforeC / endC)) * Math.log(endC / READY_WITHIN_C);
   return moreS < LONGEST_S ? moreS : null;
-}
-
-/** Value of a series at a moment, straight between its moments. */
-function at(timeS: Float64Array, values: Float64Array, atS: number): number {
-  let low = 0;
-  let high = timeS.length - 1;
-  while (high - low > 1) {
-    const middle = (low + high) >> 1;
-    if ((timeS[middle] ?? 0) <= atS) low = middle;
-    else high = middle;
-  }
-  const spanS = (timeS[high] ?? 0) - (timeS[low] ?? 0);
-  const from = values[low] ?? NaN;
-  return spanS > 0 ? from + (((values[high] ?? from) - from) * (atS - (timeS[low] ?? 0))) / spanS : from;
 }

@@ -133,15 +133,11 @@ function Pieces({ split, load }: { readonly split: Estimate['split']; readonly l
   const units = useUnits();
   return (
     <Sheet title="What each bears" foot="By mass with water and pattern; shelves and the kiln belong to all.">
-      {split.map(({ mould, share, energyKWh, cost }) => {
-        const line = load.moulds[mould];
-        const massKg = line ? line.count * (line.massKg + line.waterKg + (line.pattern?.massKg ?? 0)) : 0;
-        return (
-          <Row key={mould} name={nameOf(load, mould)}>
-            {`${formatMass(massKg, units.mass)}, ${Math.round(share * 100)} %: ${cost ? `${moneyText(cost)}, ` : ''}${kWh(energyKWh)}`}
-          </Row>
-        );
-      })}
+      {split.map(({ mould, massKg, share, energyKWh, cost }) => (
+        <Row key={mould} name={nameOf(load, mould)}>
+          {`${formatMass(massKg, units.mass)}, ${Math.round(share * 100)} %: ${cost ? `${moneyText(cost)}, ` : ''}${kWh(energyKWh)}`}
+        </Row>
+      ))}
     </Sheet>
   );
 }

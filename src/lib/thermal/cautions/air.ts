@@ -1,6 +1,7 @@
 import { ROOM_AIR_KG_PER_M3 } from '../constants';
 import type { Caution } from '../estimate-schema';
-import { type CautionRule, type FiringView, segmentsOf, seriesAt } from './view';
+import { type CautionRule, type FiringView, segmentsOf } from './view';
+import { seriesAt } from '../series';
 import { twoDigits } from './words';
 
 /** Gas of which more than this share finds no air leaves as smoke and soot; above the second most of it does. */

@@ -1,6 +1,7 @@
 import type { Caution } from '../estimate-schema';
 import { soakMoreS } from '../soak';
-import { type CautionRule, segmentsOf, seriesAt } from './view';
+import { type CautionRule, segmentsOf } from './view';
+import { seriesAt } from '../series';
 
 /** A core this near its target counts as there. */
 const THERE_C = 10;

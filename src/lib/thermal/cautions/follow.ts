@@ -1,4 +1,5 @@
-import { type FiringView, placeAt, type segmentsOf } from './view';
+import { type FiringView, type segmentsOf } from './view';
+import { placeAt } from '../series';
 
 type SegmentView = ReturnType<typeof segmentsOf> extends Generator<infer Each> ? Each : never;
 

@@ -1,6 +1,7 @@
 import type { Caution } from '../estimate-schema';
 import { devitrifiedHours } from './rates';
-import { type CautionRule, firesTheMould, firstAbove, indexOfLargest, lastHotSegment, placeAt } from './view';
+import { type CautionRule, firesTheMould, firstAbove, indexOfLargest, lastHotSegment } from './view';
+import { placeAt } from '../series';
 import { twoDigits } from './words';
 
 /** Below this share of the target a shell is weak for certain. */

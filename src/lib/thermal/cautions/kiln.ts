@@ -1,6 +1,7 @@
 import type { Caution } from '../estimate-schema';
 import { strayingOf } from './follow';
-import { type CautionRule, type FiringView, segmentsOf, seriesAt } from './view';
+import { type CautionRule, type FiringView, segmentsOf } from './view';
+import { seriesAt } from '../series';
 
 /** A kiln that is this little behind follows well enough (the band within which a run is judged). */
 const BEHIND_C = 10;

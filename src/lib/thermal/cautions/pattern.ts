@@ -6,9 +6,9 @@ import {
   type FiringView,
   lastHotSegment,
   type MouldView,
-  placeAt,
   segmentsOf,
 } from './view';
+import { placeAt } from '../series';
 import { inSentence, twoDigits } from './words';
 
 /** Slower than this through its melting a wax warms through and swells before its skin can run. */

@@ -1,5 +1,5 @@
 import { cautionsOf, type CautionContext } from '../cautions';
-import { seriesAt } from '../cautions/view';
+import { seriesAt } from '../series';
 import type { Caution } from '../estimate-schema';
 import { simulate } from '../simulate';
 import type { Simulation } from '../simulation';

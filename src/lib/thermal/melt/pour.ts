@@ -3,6 +3,7 @@ import { pouring } from '../../materials/pouring';
 import type { Mould, Pour } from '../load-schema';
 import { readyS, slowestMould } from '../readiness';
 import { curveOf } from '../resolve-kiln';
+import { seriesAt } from '../series';
 import type { MouldTrace, Simulation } from '../simulation';
 import { carriedC, carriedUntilS, type Carried } from './carry';
 import { chargeAlloy } from './charge';
@@ -104,8 +105,8 @@ function mouldAtPour(simulation: Simulation, trace: MouldTrace, moment: Moment):
   const mould = simulation.load.moulds[trace.index];
   if (!mould) throw new RangeError(`the load has no mould ${trace.index}`);
   const wall = pourWallOf(mould, simulation.ambientC);
-  const coreLeavingC = valueAtS(simulation.timeS, trace.coreC, atS);
-  const leaving = wallBetween(wall, valueAtS(simulation.timeS, trace.surfaceC, atS), coreLeavingC);
+  const coreLeavingC = seriesAt(simulation.timeS, trace.coreC, atS);
+  const leaving = wallBetween(wall, seriesAt(simulation.timeS, trace.surfaceC, atS), coreLeavingC);
   const wallC = wallAfterS(wall, leaving, pour.carryS);
   const mouldCount = simulation.load.moulds.reduce((sum, { count }) => sum + count, 0);
   return {
@@ -151,20 +152,4 @@ function pourWallOf(mould: Mould, ambientC: number): PourWall {
     convectionWPerM2K: valueAt(pouring.shopConvectionWPerM2K, 20),
     ambientC,
   };
-}
-
-/** Value of a series at a moment: straight between its moments, its end values outside. */
-function valueAtS(timeS: Float64Array, values: Float64Array, atS: number): number {
-  let low = 0;
-  let high = timeS.length - 1;
-  if (atS >= (timeS[high] ?? 0)) return values[high] ?? NaN;
-  while (high - low > 1) {
-    const middle = (low + high) >> 1;
-    if ((timeS[middle] ?? 0) <= atS) low = middle;
-    else high = middle;
-  }
-  const fromS = timeS[low] ?? 0;
-  const spanS = (timeS[high] ?? 0) - fromS;
-  const from = values[low] ?? NaN;
-  return spanS > 0 ? from + (((values[high] ?? from) - from) * (atS - fromS)) / spanS : from;
 }
